@@ -254,3 +254,7 @@ export interface WireOverview {
   stock: { refrigerant: string; massKg: string; cylinders: number }[] | null
   latest: { id: string; occurredOn: PlainDate; kind: string; circuitName: string | null; siteName: string | null; massKg: string; refrigerant: string; personName: string }[]
 }
+
+/** One call at one site by one technician. */
+export interface VisitDraft { id: string; siteId: string; visitedOn: PlainDate; remark: string | null }
+export interface WireVisit extends VisitDraft { siteName: string; customerName: string; personId: string; personName: string; postingCount: number; may: string[] }
