@@ -1,0 +1,11 @@
+import { createCoreContext, translate } from '@intlify/core-base'
+import { en } from '../shared/language/en'
+
+const DEFAULT_LOCALE = 'en'
+const context = createCoreContext({ locale: DEFAULT_LOCALE, fallbackLocale: DEFAULT_LOCALE, messages: { en }, missingWarn: false, fallbackWarn: false })
+
+/** The sentence of a key in a person's language; English where that language lacks it, the key where both do. */
+export function say(locale: string, key: string, params: Record<string, unknown> = {}): string {
+  const sentence = translate(context, key, params, { locale })
+  return typeof sentence === 'string' ? sentence : key
+}
