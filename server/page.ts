@@ -1,0 +1,65 @@
+import type { Page } from '../shared/api/page'
+import { badField } from './problem'
+
+const DEFAULT_ROWS = 50
+
+/** One way to sort a list: the SQL of its key, and its type for the cursor's comparison. */
+export interface SortKey {
+  sql: string
+  type: 'text' | 'integer' | 'bigint' | 'date' | 'timestamptz' | 'uuid'
+}
+
+export interface PageOrder {
+  /** SQL after `where`: the rows beyond the cursor; 'true' on the first page. */
+  beyond: string
+  orderBy: string
+  limit: number
+  /** The sort key's value of each row, to be selected as `page_key`. */
+  keySql: string
+}
+
+/**
+ * Keyset paging: the SQL parts of a page, with the cursor's values appended to `parameters`.
+ * Every sort is made unique by the row's id.
+ *
+ * @throws Problem bad-input for a sort or a cursor that this list does not know
+ */
+export function pageOrder(
+  query: { sort?: string; after?: string; limit?: number },
+  keys: Record<string, SortKey>, defaultSort: string, idSql: string, parameters: unknown[],
+): PageOrder {
+  const sort = query.sort ?? defaultSort
+  const isDescending = sort.startsWith('-')
+  const key = keys[isDescending ? sort.slice(1) : sort]
+  if (!key) throw badField('sort', 'sort')
+  const direction = isDescending ? 'desc' : 'asc'
+  const order = { orderBy: `${key.sql} ${direction}, ${idSql} ${direction}`, limit: query.limit ?? DEFAULT_ROWS, keySql: key.sql }
+  if (!query.after) return { ...order, beyond: 'true' }
+  const [value, id] = readCursor(query.after)
+  parameters.push(value, id)
+  return { ...order, beyond: `(${key.sql}, ${idSql}) ${isDescending ? '<' : '>'} ($${parameters.length - 1}::${key.type}, $${parameters.length}::uuid)` }
+}
+
+/** Builds the answer of rows fetched with one more than the limit, each with `page_key` and `id`. */
+export function pageOf<Raw extends { id: string; page_key: unknown }, Row>(raws: Raw[], limit: number, toRow: (raw: Raw) => Row): Page<Row> {
+  const shown = raws.slice(0, limit)
+  const last = shown.at(-1)
+  return { rows: shown.map(toRow), next: raws.length > limit && last ? writeCursor(last.page_key, last.id) : null }
+}
+
+const writeCursor = (key: unknown, id: string): string =>
+  Buffer.from(JSON.stringify([key instanceof Date ? key.toISOString() : String(key), id])).toString('base64url')
+
+const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/
+
+function readCursor(text: string): [string, string] {
+  try {
+    const [value, id] = JSON.parse(Buffer.from(text, 'base64url').toString('utf8')) as [unknown, unknown]
+    if (typeof value === 'string' && !value.includes('\0') && typeof id === 'string' && UUID.test(id)) return [value, id]
+  } catch { /* told below */ }
+  throw badField('after', 'after')
+}
+
+/** Words sought, for `ilike`: each must occur somewhere; wildcards in them are taken literally. */
+export const soughtWords = (search: string | undefined): string[] =>
+  (search ?? '').split(/\s+/).filter(Boolean).slice(0, 6).map((word) => `%${word.replace(/[\\%_]/g, '\\$&')}%`)
