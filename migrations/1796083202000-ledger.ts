@@ -55,11 +55,13 @@ export class Ledger1796083202000 implements MigrationInterface {
         company_id uuid not null,
         account_id uuid not null,
         refrigerant text not null,
+        kind text not null check (kind in ('cylinder', 'circuit')),
         mass_kg numeric(24, 14) not null,
         customer_id uuid,
         primary key (company_id, account_id, refrigerant),
         foreign key (company_id, account_id) references account,
-        constraint balance_not_negative check (mass_kg >= 0)
+        -- the book of a circuit may fall below nothing by a reversal, until the next complete weigh-in
+        constraint cylinder_not_negative check (kind = 'circuit' or mass_kg >= 0)
       );
 
       create table posting (
@@ -180,6 +182,8 @@ export class Ledger1796083202000 implements MigrationInterface {
     await runner.query(`
       grant select, insert, update on partner, cylinder, balance to weighback_app;
       grant select, insert on account to weighback_app;
+      -- no column of an account changes; the right to one of them is what lets the application lock a row
+      grant update (customer_id) on account to weighback_app;
     `)
   }
 

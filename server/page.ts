@@ -1,4 +1,5 @@
 import type { Page } from '../shared/api/page'
+import { isPlainDate } from '../shared/dates/plain-date'
 import { badField } from './problem'
 
 const DEFAULT_ROWS = 50
@@ -14,7 +15,7 @@ export interface PageOrder {
   beyond: string
   orderBy: string
   limit: number
-  /** The sort key's value of each row, to be selected as `page_key`. */
+  /** The sort key of each row as text, to be selected as `page_key`. */
   keySql: string
 }
 
@@ -33,9 +34,9 @@ export function pageOrder(
   const key = keys[isDescending ? sort.slice(1) : sort]
   if (!key) throw badField('sort', 'sort')
   const direction = isDescending ? 'desc' : 'asc'
-  const order = { orderBy: `${key.sql} ${direction}, ${idSql} ${direction}`, limit: query.limit ?? DEFAULT_ROWS, keySql: key.sql }
+  const order = { orderBy: `${key.sql} ${direction}, ${idSql} ${direction}`, limit: query.limit ?? DEFAULT_ROWS, keySql: `${key.sql}::text` }
   if (!query.after) return { ...order, beyond: 'true' }
-  const [value, id] = readCursor(query.after)
+  const [value, id] = readCursor(query.after, key.type)
   parameters.push(value, id)
   return { ...order, beyond: `(${key.sql}, ${idSql}) ${isDescending ? '<' : '>'} ($${parameters.length - 1}::${key.type}, $${parameters.length}::uuid)` }
 }
@@ -48,14 +49,23 @@ export function pageOf<Raw extends { id: string; page_key: unknown }, Row>(raws:
 }
 
 const writeCursor = (key: unknown, id: string): string =>
-  Buffer.from(JSON.stringify([key instanceof Date ? key.toISOString() : String(key), id])).toString('base64url')
+  Buffer.from(JSON.stringify([String(key), id])).toString('base64url')
 
 const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/
 
-function readCursor(text: string): [string, string] {
+const FITS: Record<SortKey['type'], (value: string) => boolean> = {
+  text: () => true,
+  integer: (value) => /^-?\d{1,9}$/.test(value),
+  bigint: (value) => /^-?\d{1,18}$/.test(value),
+  date: isPlainDate,
+  timestamptz: (value) => value.length < 40 && !Number.isNaN(Date.parse(value)) && /^\d{4}-\d{2}-\d{2} /.test(value),
+  uuid: (value) => UUID.test(value),
+}
+
+function readCursor(text: string, type: SortKey['type']): [string, string] {
   try {
     const [value, id] = JSON.parse(Buffer.from(text, 'base64url').toString('utf8')) as [unknown, unknown]
-    if (typeof value === 'string' && !value.includes('\0') && typeof id === 'string' && UUID.test(id)) return [value, id]
+    if (typeof value === 'string' && !value.includes('\0') && FITS[type](value) && typeof id === 'string' && UUID.test(id)) return [value, id]
   } catch { /* told below */ }
   throw badField('after', 'after')
 }

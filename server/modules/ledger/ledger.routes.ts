@@ -1,0 +1,42 @@
+import { Answer, route, type Route } from '../../route'
+import type { House } from '../../house'
+import { notFound, Problem } from '../../problem'
+import { IdParams } from '../../fields'
+import { checkLedger } from './check.service'
+import { PostingDraftDto, PostingsQuery } from './ledger.dto'
+import * as ledger from './ledger.service'
+import { listPostings, postingById } from './postings.repository'
+
+const CREATED = 201
+const OK = 200
+
+export const ledgerRoutes = (house: House): Route[] => [
+  route({
+    method: 'post', path: '/api/postings', may: 'posting.create', summary: 'Post a weighing once; a repeat gets the first answer', body: PostingDraftDto,
+    problems: ['posting-id-reused', 'idempotency-key-missing', 'wrong-refrigerant', 'fill-limit-exceeded', 'test-date-passed', 'cylinder-negative'],
+    handle: async ({ who, body, request }) => {
+      const key = request.get('idempotency-key')
+      if (!key) throw new Problem('idempotency-key-missing')
+      if (key.replaceAll('"', '') !== body.id) throw new Problem('posting-id-reused')
+      const posted = await house.database.inCompany(who, (tx) => ledger.post(tx, who, body, house.now()))
+      const wire = await house.database.inCompany(who, (tx) => postingById(tx, who, posted.id))
+      return new Answer(posted.isNew ? CREATED : OK, wire)
+    },
+  }),
+  route({
+    method: 'get', path: '/api/postings', may: 'posting.read', summary: 'Postings, newest first', query: PostingsQuery,
+    handle: ({ who, query }) => house.database.inCompany(who, (tx) => listPostings(tx, who, query)),
+  }),
+  route({
+    method: 'get', path: '/api/postings/:id', may: 'posting.read', summary: 'One posting with its entries', params: IdParams, problems: ['not-found'],
+    handle: async ({ who, params }) => {
+      const posting = await house.database.inCompany(who, (tx) => postingById(tx, who, params.id))
+      if (!posting) throw notFound('posting')
+      return posting
+    },
+  }),
+  route({
+    method: 'get', path: '/api/ledger/check', may: 'ledger.check', summary: 'Recompute the whole ledger and name every fault', perMinute: 6,
+    handle: ({ who }) => house.database.inCompany(who, (tx) => checkLedger(tx, who.companyId, house.now())),
+  }),
+]
