@@ -1,4 +1,5 @@
 import type { PlainDate } from '../dates/plain-date'
+import type { PostingPurpose } from './ledger'
 import type { Category } from '../rules/categories'
 
 export interface CustomerDraft {
@@ -191,10 +192,11 @@ export interface WireHistory {
     kind: 'addition' | 'removal' | 'follow-up-passed'
     postingId: string | null
     occurredOn: PlainDate
-    occurredAt: string
+    /** Null for a test of which only the day is known. */
+    occurredAt: string | null
     massKg: string | null
     leakId: string | null
-    purpose: string | null
+    purpose: PostingPurpose | null
   }[]
 }
 

@@ -1,0 +1,40 @@
+/** Every expected no of the API, with its HTTP status. Title and sentence stand in the language file under `problems`. */
+export const PROBLEMS = {
+  'bad-input': 422,
+  'unreadable-body': 400,
+  'body-too-large': 413,
+  'unsupported-media-type': 415,
+  'not-signed-in': 401,
+  'wrong-credentials': 401,
+  'not-allowed': 403,
+  'forged-request': 403,
+  'not-found': 404,
+  'link-expired': 410,
+  'too-many-requests': 429,
+  'version-missing': 428,
+  'changed-meanwhile': 412,
+  'idempotency-key-missing': 400,
+  'email-taken': 409,
+  'name-taken': 409,
+  'still-in-use': 409,
+  'posting-id-reused': 422,
+  'unavailable': 503,
+  'internal': 500,
+  // refusals of the ledger, shared/mass/refusals.ts
+  'wrong-refrigerant': 422,
+  'test-date-passed': 422,
+  'fill-limit-exceeded': 422,
+  'disposable-not-refillable': 422,
+  'cylinder-negative': 422,
+  'circuit-negative': 422,
+  'mixed-not-chargeable': 422,
+  'recovered-of-another-owner': 422,
+  'cylinder-out-of-use': 422,
+  'circuit-retired': 422,
+  'already-reversed': 422,
+  'reversal-of-reversal': 422,
+  'date-in-future': 422,
+} as const satisfies Record<string, number>
+
+export type ProblemCode = keyof typeof PROBLEMS
+export const isProblemCode = (code: string): code is ProblemCode => code in PROBLEMS
