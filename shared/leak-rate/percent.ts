@@ -11,6 +11,15 @@ export function percent(text: string): Percent {
 
 /** A dimensionless ratio as a percentage: 0.25 becomes 25 %. */
 export const percentOfRatio = (value: Exact): Percent => value.times(100) as Percent
+/**
+ * A quotient as a percentage, divided once, so that exactly 10 % comes out as exactly 10.
+ *
+ * @throws RangeError if the divisor is zero
+ */
+export function percentOfQuotient(dividend: Exact, divisor: Exact): Percent {
+  if (divisor.isZero()) throw new RangeError('A percentage of zero has no meaning.')
+  return dividend.times(100).dividedBy(divisor) as Percent
+}
 /** "Above", not "at": the reading of every threshold in the packs. */
 export const isAbove = (a: Percent, threshold: Percent): boolean => a.greaterThan(threshold)
 /** @returns [%] decimal text rounded half to even at the given digits, for display and checks only */
