@@ -202,7 +202,16 @@ export const en = {
     ounces: 'ounces',
     poundsOf: '{label}, pounds',
     ouncesOf: '{label}, ounces',
-    notAMass: 'Enter a weight such as {example}.',
+    fault: {
+      'not-a-number': 'Enter a weight such as 12.5, or 12-4.5 for pounds and ounces.',
+      'comma-unclear': 'Is the comma a thousand or a decimal sign? Please write it with a point.',
+      negative: 'A weight on the scale is not below zero.',
+      'too-fine': 'That is finer than a field scale reads; please leave off the last digits.',
+      'too-large': 'That is more than any scale here weighs; please check the digits.',
+      'ounces-over-16': 'Sixteen ounces are a pound: please enter less than 16 ounces.',
+      missing: 'Please enter this reading.',
+      'net-not-positive': 'By these readings nothing has moved the right way; please check before and after.',
+    },
     equals: '= {mass}',
   },
   standing: {
