@@ -29,10 +29,16 @@ export const addDays = (date: PlainDate, days: number): PlainDate => fromDayNumb
  */
 export function addMonths(date: PlainDate, months: number): PlainDate {
   const [year = 0, month = 0, day = 0] = date.split('-').map(Number)
-  const first = new Date(Date.UTC(year, month - 1 + months, 1))
-  const lastDay = new Date(Date.UTC(first.getUTCFullYear(), first.getUTCMonth() + 1, 0)).getUTCDate()
+  const first = monthOf(year, month - 1 + months)
+  const lastDay = monthOf(first.getUTCFullYear(), first.getUTCMonth() + 1, 0).getUTCDate()
   first.setUTCDate(Math.min(day, lastDay))
   return plainDate(first.toISOString().slice(0, 10))
+}
+/** Not Date.UTC, which takes the years 0 to 99 for the last century. */
+function monthOf(year: number, monthIndex: number, day = 1): Date {
+  const date = new Date(0)
+  date.setUTCFullYear(year, monthIndex, day)
+  return date
 }
 export const addYears = (date: PlainDate, years: number): PlainDate => addMonths(date, 12 * years)
 export const isBefore = (a: PlainDate, b: PlainDate): boolean => a < b
@@ -49,15 +55,19 @@ const formats = new Map<string, Intl.DateTimeFormat>()
  *
  * @param instant  ISO 8601 instant with offset or Z
  * @param timeZone  IANA zone name such as "America/Chicago"
- * @throws RangeError if the zone is unknown or the instant cannot be read
+ * @throws RangeError if the zone is unknown, or the instant cannot be read or does not say its offset
  */
 export function localDateOf(instant: string, timeZone: string): PlainDate {
+  // Without an offset the machine's own zone would decide.
+  if (!/T.*(Z|[+-]\d{2}:?\d{2})$/.test(instant)) throw new RangeError(`"${instant}" is not an instant with an offset.`)
   let format = formats.get(timeZone)
   if (!format) {
-    format = new Intl.DateTimeFormat('en-CA', { timeZone, year: 'numeric', month: '2-digit', day: '2-digit' })
+    format = new Intl.DateTimeFormat('en-US', { timeZone, year: 'numeric', month: '2-digit', day: '2-digit' })
     formats.set(timeZone, format)
   }
-  return plainDate(format.format(new Date(instant)))
+  const parts = format.formatToParts(new Date(instant))
+  const part = (type: Intl.DateTimeFormatPartTypes) => parts.find((each) => each.type === type)?.value ?? ''
+  return plainDate(`${part('year').padStart(4, '0')}-${part('month')}-${part('day')}`)
 }
 
 /** Whether the runtime knows this IANA zone name. */
