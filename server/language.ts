@@ -1,8 +1,10 @@
 import { createCoreContext, translate } from '@intlify/core-base'
 import { en } from '../shared/language/en'
 
+type LocaleMessages = { [key: string]: string | LocaleMessages }
 const DEFAULT_LOCALE = 'en'
-const context = createCoreContext({ locale: DEFAULT_LOCALE, fallbackLocale: DEFAULT_LOCALE, messages: { en }, missingWarn: false, fallbackWarn: false })
+const languages: Record<string, LocaleMessages> = { en }
+const context = createCoreContext({ locale: DEFAULT_LOCALE as string, fallbackLocale: DEFAULT_LOCALE, messages: languages, missingWarn: false, fallbackWarn: false })
 
 /** The sentence of a key in a person's language; English where that language lacks it, the key where both do. */
 export function say(locale: string, key: string, params: Record<string, unknown> = {}): string {

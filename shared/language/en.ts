@@ -4,6 +4,8 @@
  */
 export const en = {
   problems: {
+    whereCircuit: 'The circuit',
+    whereCylinder: 'Cylinder {number}',
     'bad-input': { title: 'Some fields need another look', detail: 'Nothing was saved. Mend the fields named below and send again.' },
     'unreadable-body': { title: 'The request could not be read', detail: 'What was sent is not readable JSON. Send it again; nothing was saved.' },
     'body-too-large': { title: 'Too much at once', detail: 'What was sent is larger than the server takes. Send it in smaller parts.' },
@@ -75,6 +77,21 @@ export const en = {
     ownerNeedsCustomer: 'Choose the customer whose sites this person may see.',
     lastAdministrator: 'The last administrator keeps the role. Make another person administrator first.',
     year: 'A year from {least} to {most}.',
+    posting: {
+      'account-missing': 'Choose one: this kind of entry needs it.',
+      'same-cylinder': 'Choose another cylinder: gas cannot be moved into the one it comes from.',
+      'mass-unreadable': 'A mass above zero.',
+      'mass-zero': 'A mass other than zero.',
+      'mass-negative': 'A mass above zero; only a variance may be below.',
+      'reason-missing': 'Say why it is taken back; the reason stands in the ledger.',
+      'unknown-cylinder': 'Choose a cylinder from the list.',
+      'unknown-circuit': 'Choose a circuit from the list.',
+      'unknown-partner': 'Choose a trade partner from the list.',
+      'wrong-partner': 'Choose a partner of the right kind: a supplier, a reclaimer or a destroyer.',
+      'unknown-visit': 'Choose a visit to this site.',
+      'unknown-leak': 'Choose a leak of this circuit.',
+      'unknown-posting': 'Choose a posting of the ledger.',
+    },
   },
   mail: {
     invitation: {
@@ -171,6 +188,7 @@ export const en = {
     scanHint: 'Typing the number always works.',
   },
   units: {
+    poundsAndKilograms: '{pounds} lb ({kilograms} kg)',
     mass: 'Mass',
     pressure: 'Pressure',
     temperature: 'Temperature',

@@ -45,7 +45,7 @@ async function checkContents(tx: Tx, companyId: string, fault: Fault): Promise<n
 async function checkSeals(tx: Tx, companyId: string, fault: Fault): Promise<{ sealed: number; found: number; seals: number; last: string | null }> {
   const seals = await tx.query('select number, previous_hash, hash, posting_count from seal where company_id = $1 order by number', [companyId]) as
     { number: number; previous_hash: Buffer; hash: Buffer; posting_count: number }[]
-  let previous = GENESIS
+  let previous: Buffer = GENESIS
   let sealed = 0
   let found = 0
   for (const [index, seal] of seals.entries()) {

@@ -8,7 +8,7 @@ import { buildPosting } from '../../../shared/mass/postings'
 import { refusePosting } from '../../../shared/mass/refusals'
 import { may, type Actor } from '../../actor'
 import type { Tx } from '../../database'
-import { notFound, Problem, type FieldFault } from '../../problem'
+import { Problem, type FieldFault } from '../../problem'
 import * as standing from '../standing/standing.service'
 import { problemOfRefusal } from './refusal-problems'
 import * as repository from './ledger.repository'
@@ -33,7 +33,7 @@ export interface Posted { id: string; isNew: boolean }
 export async function post(tx: Tx, who: Actor, sent: PostingDraft, now: Date): Promise<Posted> {
   demandKind(who, sent.kind)
   const original = sent.reversesId && sent.kind === 'reversal' ? await repository.readOriginal(tx, who.companyId, sent.reversesId) : null
-  if (sent.kind === 'reversal' && sent.reversesId && !original) throw new Problem('bad-input', {}, [{ field: 'reversesId', key: 'oneOf', params: { values: 'postings' } }])
+  if (sent.kind === 'reversal' && sent.reversesId && !original) throw new Problem('bad-input', {}, [{ field: 'reversesId', key: 'posting.unknown-posting' }])
   const faults = draftFaults(sent)
   if (faults.length > 0) throw new Problem('bad-input', {}, faults.map(({ field, code }) => ({ field, key: `posting.${code}` })))
 

@@ -1,0 +1,137 @@
+import type PDFDocument from 'pdfkit'
+import { fontFile } from './fonts'
+import { internalsOf, type DocumentInternals, type FontInternals } from './internals'
+import { LEADING, type TextStyle, type Weight } from './look'
+
+/** A word shaped once: its glyphs as an operand of TJ, and its width at size 1. */
+interface Shaped {
+  glyphs: string
+  width: number
+  isWhole: boolean
+}
+
+const MOST_SHAPED = 20_000 // words kept per font and document; beyond it the store is emptied
+const FIGURES = ['tnum']
+const MISSING = '0000' // the glyph of a sign that the font lacks
+const UNSEEN = /[\u200b-\u200f\u202a-\u202e\u2060-\u2069\ufeff]/g // turn text around or take no room: no place in a record
+// eslint-disable-next-line no-control-regex -- control signs are what is looked for
+const CONTROL = /[\u0000-\u0009\u000b-\u001f\u007f-\u009f]/g
+
+/** Shapes, measures, breaks and writes text. One per document. */
+export class Pen {
+  private readonly internals: DocumentInternals
+  private readonly fonts: Record<Weight, FontInternals>
+  private readonly shaped = new Map<string, Shaped>()
+
+  constructor(private readonly document: InstanceType<typeof PDFDocument>) {
+    this.internals = internalsOf(document)
+    this.fonts = { regular: this.open('regular'), semibold: this.open('semibold') }
+  }
+
+  font(weight: Weight): FontInternals {
+    return this.fonts[weight]
+  }
+
+  /** [pt] of one line. */
+  lineHeight(style: TextStyle): number {
+    return style.size * LEADING
+  }
+
+  /** [pt] of a text without line breaks. */
+  width(text: string, style: TextStyle): number {
+    return this.pieces(text, style).reduce((sum, piece) => sum + piece.width, 0) * style.size
+  }
+
+  /** Breaks a text into lines of at most a width [pt]: at spaces, and within a word only where it alone is too long. */
+  lines(text: string, style: TextStyle, width: number): string[] {
+    return clean(text).split('\n').flatMap((paragraph) => this.breakParagraph(paragraph, style, width))
+  }
+
+  /** Writes one line with its top left corner at x, y [pt]. */
+  write(line: string, x: number, y: number, style: TextStyle): void {
+    const pieces = this.pieces(line, style)
+    if (pieces.length === 0) return
+    const font = this.fonts[style.weight]
+    this.internals.page.fonts[font.id] ??= font.ref()
+    const baseline = y + (this.lineHeight(style) - style.size) / 2 + style.size * 0.79 // Inter's letters stand in the middle of the line
+    const isWhole = pieces.every((piece) => piece.isWhole)
+    this.document.fillColor(style.colour)
+    if (!isWhole) this.document.markContent('Span', { actual: line })
+    this.internals.addContent(`BT /${font.id} ${style.size} Tf 1 0 0 -1 ${round(x)} ${round(baseline)} Tm [${pieces.map((piece) => piece.glyphs).join(' ')}] TJ ET`)
+    if (!isWhole) this.document.endMarkedContent()
+  }
+
+  /** The operand of TJ for a line, for content that is not on the page itself. */
+  glyphs(line: string, style: TextStyle): string {
+    return this.pieces(line, style).map((piece) => piece.glyphs).join(' ')
+  }
+
+  private open(weight: Weight): FontInternals {
+    this.document.registerFont(weight, fontFile(weight)).font(weight)
+    return this.internals._font
+  }
+
+  private breakParagraph(paragraph: string, style: TextStyle, width: number): string[] {
+    const lines: string[] = []
+    let line = ''
+    let used = 0
+    const space = this.shape(' ', style).width * style.size
+    for (const word of paragraph.split(' ').filter(Boolean).flatMap((each) => this.fitting(each, style, width))) {
+      const wide = this.width(word, style)
+      if (line && used + space + wide > width) {
+        lines.push(line)
+        line = word
+        used = wide
+      } else {
+        used += (line ? space : 0) + wide
+        line = line ? `${line} ${word}` : word
+      }
+    }
+    return [...lines, line]
+  }
+
+  /** A word in pieces that fit a line. */
+  private fitting(word: string, style: TextStyle, width: number): string[] {
+    if (this.width(word, style) <= width) return [word]
+    const parts: string[] = []
+    let part = ''
+    for (const sign of word) {
+      if (part && this.width(part + sign, style) > width) {
+        parts.push(part)
+        part = ''
+      }
+      part += sign
+    }
+    return [...parts, part]
+  }
+
+  private pieces(text: string, style: TextStyle): Shaped[] {
+    const space = this.shape(' ', style)
+    return text.replace(/[\u00a0\u202f]/g, ' ').split(' ')
+      .flatMap((word, index) => [...(index > 0 ? [space] : []), ...(word ? [this.shape(word, style)] : [])])
+  }
+
+  private shape(word: string, style: TextStyle): Shaped {
+    const key = `${style.weight}${style.hasTabularFigures ? '#' : ' '}${word}`
+    const known = this.shaped.get(key)
+    if (known) return known
+    const [codes, positions] = this.fonts[style.weight].encode(word, style.hasTabularFigures ? FIGURES : undefined)
+    const glyphs: string[] = []
+    let width = 0
+    positions.forEach((position, index) => {
+      width += position.xAdvance / 1000
+      const kern = position.advanceWidth - position.xAdvance
+      glyphs.push(`<${codes[index] ?? MISSING}>${kern === 0 ? '' : ` ${round(kern)}`}`)
+    })
+    if (this.shaped.size >= MOST_SHAPED) this.shaped.clear()
+    const shaped = { glyphs: glyphs.join('').replaceAll('><', ''), width, isWhole: !codes.includes(MISSING) }
+    this.shaped.set(key, shaped)
+    return shaped
+  }
+}
+
+/** Text as it may stand on paper: no control signs but line breaks. */
+const clean = (text: string): string =>
+  text.toWellFormed().replace(/\r\n?|\u2028|\u2029/g, '\n').replace(CONTROL, ' ').replace(UNSEEN, '')
+
+const round = (value: number): string => String(Math.round(value * 1000) / 1000)
