@@ -1,5 +1,6 @@
 import { createI18n } from 'vue-i18n'
 import type { Language } from '../shared/language/en'
+import { compileMessage } from './language-compiler'
 
 /** One line per language: its file is fetched when it is wanted. */
 const LANGUAGES: Record<string, () => Promise<Language>> = {
@@ -8,7 +9,15 @@ const LANGUAGES: Record<string, () => Promise<Language>> = {
 export const DEFAULT_LOCALE = 'en'
 export const LOCALES = Object.keys(LANGUAGES)
 
-export const i18n = createI18n({ legacy: false, locale: DEFAULT_LOCALE, fallbackLocale: DEFAULT_LOCALE, messages: {}, missingWarn: import.meta.env.DEV, fallbackWarn: false })
+export const i18n = createI18n({
+  legacy: false,
+  locale: DEFAULT_LOCALE,
+  fallbackLocale: DEFAULT_LOCALE,
+  messages: {},
+  messageCompiler: compileMessage,
+  missingWarn: import.meta.env.DEV,
+  fallbackWarn: false,
+})
 
 const loaded = new Set<string>()
 

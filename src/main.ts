@@ -1,5 +1,4 @@
 import { createPinia } from 'pinia'
-import PrimeVue from 'primevue/config'
 import { createApp } from 'vue'
 import App from './App.vue'
 import { applyStoredTheme } from './composables/useTheme'
@@ -8,22 +7,19 @@ import { router } from './router/router'
 import './theme/fonts.css'
 import './theme/tokens.css'
 import './theme/base.css'
-import { weighbackPreset } from './theme/preset'
 
 applyStoredTheme()
 await showLanguage(DEFAULT_LOCALE)
 
-createApp(App)
-  .use(createPinia())
-  .use(i18n)
-  .use(router)
-  .use(PrimeVue, {
-    theme: { preset: weighbackPreset, options: { prefix: 'p', darkModeSelector: '[data-theme="dark"]', cssLayer: { name: 'primevue', order: 'base, primevue, house' } } },
-    // The server names a fresh nonce in the page: styles are taken from us and from nobody else.
-    csp: { nonce: cspNonce() },
-  })
-  .mount('#app')
+const app = createApp(App).use(createPinia()).use(i18n)
 
-function cspNonce(): string | undefined {
-  return document.querySelector<HTMLMetaElement>('meta[property="csp-nonce"]')?.nonce || undefined
-}
+// PrimeVue comes with the first page behind the sign-in, which it would only delay.
+let isPrimeVueThere = false
+router.beforeResolve(async (to) => {
+  if (to.meta.isOpen || isPrimeVueThere) return
+  const { installPrimeVue } = await import('./theme/install-primevue')
+  if (!isPrimeVueThere) installPrimeVue(app)
+  isPrimeVueThere = true
+})
+
+app.use(router).mount('#app')

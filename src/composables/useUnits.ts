@@ -1,16 +1,12 @@
 import { computed, inject } from 'vue'
-import type { InjectionKey, Ref } from 'vue'
 import { useI18n } from 'vue-i18n'
 import type { MassUnit } from '../../shared/api/ledger'
-import type { Preferences } from '../../shared/api/people'
 import type { PlainDate } from '../../shared/dates/plain-date'
 import { kg } from '../../shared/mass/mass'
 import type { Mass } from '../../shared/mass/mass'
 import { massIn, parseMass } from '../../shared/units/mass-units'
 import type { Reading } from '../../shared/units/mass-units'
-
-/** The preferences of the person at the screen, provided by the app. */
-export const PREFERENCES: InjectionKey<Readonly<Ref<Preferences>>> = Symbol('preferences')
+import { PREFERENCES } from './preferences'
 
 /** Digits after the point that a mass is shown with; the exact value stays behind it. */
 const SHOWN_DIGITS: Record<MassUnit, number> = { lb: 2, 'lb-oz': 1, oz: 1, kg: 3, g: 0 }

@@ -1,12 +1,4 @@
-import { definePreset } from '@primeuix/themes'
-import auraBase from '@primeuix/themes/aura/base'
-import autocomplete from '@primeuix/themes/aura/autocomplete'
-import button from '@primeuix/themes/aura/button'
-import checkbox from '@primeuix/themes/aura/checkbox'
-import datatable from '@primeuix/themes/aura/datatable'
-import dialog from '@primeuix/themes/aura/dialog'
-import inputtext from '@primeuix/themes/aura/inputtext'
-import textarea from '@primeuix/themes/aura/textarea'
+import type { Preset } from '@primeuix/themes/types'
 
 /** A house colour: its value for light and dark stands in tokens.css and nowhere else. */
 const house = (name: string): string => `var(--wb-${name})`
@@ -72,66 +64,140 @@ const scheme = {
   },
 }
 
-/** The look of the house for PrimeVue: square-cut, ruled, without shadows; colours from tokens.css. */
-export const weighbackPreset = definePreset(
-  { semantic: auraBase.semantic, components: { autocomplete, button, checkbox, datatable, dialog, inputtext, textarea } },
-  {
-    primitive: {
-      borderRadius: { none: '0', xs: '2px', sm: '2px', md: '3px', lg: '3px', xl: '4px' },
-      red: vermilion,
-      orange: amber,
-      amber,
-      yellow: amber,
-      green: spruce,
-      sky: steel,
-      purple: steel,
-    },
-    semantic: {
-      transitionDuration: '120ms',
-      focusRing: { width: '3px', style: 'solid', color: house('focus'), offset: '2px', shadow: 'none' },
-      disabledOpacity: '0.55',
-      primary: spruce,
-      formField: {
-        paddingX: '0.75rem',
-        paddingY: '0.5625rem',
-        borderRadius: house('radius'),
-        focusRing: { width: '2px', style: 'solid', color: house('focus'), offset: '-1px', shadow: 'none' },
-      },
-      overlay: {
-        select: { shadow: house('shadow-high') },
-        popover: { shadow: house('shadow-high') },
-        modal: { borderRadius: '4px', padding: '1.25rem', shadow: house('shadow-high') },
-      },
-      colorScheme: { light: scheme, dark: scheme },
-    },
-    components: {
-      button: {
-        root: { label: { fontWeight: '600' }, paddingX: '1.0625rem', paddingY: '0.5625rem' },
-        colorScheme: {
-          light: buttonScheme(),
-          dark: buttonScheme(),
-        },
-      },
-    },
-  },
-)
 
-function buttonScheme() {
-  return {
-    root: {
-      danger: {
-        background: house('over-text'), hoverBackground: house('over-text'), activeBackground: house('over-text'),
-        borderColor: house('over-text'), hoverBorderColor: house('over-text'), activeBorderColor: house('over-text'),
-        color: house('sheet'), hoverColor: house('sheet'), activeColor: house('sheet'),
+const buttonScheme = {
+  root: {
+    primary: filled(house('spruce'), house('spruce-hover'), house('spruce-press'), house('on-spruce')),
+    secondary: filled(house('sunk'), house('rule'), house('rule-strong'), house('ink')),
+    danger: filled(house('over-text'), house('over-text'), house('over-text'), house('sheet')),
+  },
+  outlined: {
+    primary: lined(house('spruce-wash'), house('spruce-wash'), house('spruce'), house('link')),
+    secondary: lined(house('sunk'), house('rule'), house('field-line'), house('ink')),
+    danger: lined(house('over-wash'), house('over-wash'), house('over-text'), house('over-text')),
+  },
+  text: {
+    primary: lined(house('spruce-wash'), house('spruce-wash'), 'transparent', house('link')),
+    secondary: lined(house('sunk'), house('rule'), 'transparent', house('ink')),
+    danger: lined(house('over-wash'), house('over-wash'), 'transparent', house('over-text')),
+  },
+}
+
+const textField = {
+  root: {
+    background: '{form.field.background}',
+    disabledBackground: '{form.field.disabled.background}',
+    filledBackground: '{form.field.background}',
+    filledHoverBackground: '{form.field.background}',
+    filledFocusBackground: '{form.field.background}',
+    borderColor: '{form.field.border.color}',
+    hoverBorderColor: '{form.field.hover.border.color}',
+    focusBorderColor: '{form.field.focus.border.color}',
+    invalidBorderColor: '{form.field.invalid.border.color}',
+    color: '{form.field.color}',
+    disabledColor: '{form.field.disabled.color}',
+    placeholderColor: '{form.field.placeholder.color}',
+    invalidPlaceholderColor: '{form.field.placeholder.color}',
+    shadow: 'none',
+    paddingX: '{form.field.padding.x}',
+    paddingY: '{form.field.padding.y}',
+    borderRadius: '{form.field.border.radius}',
+    focusRing: ring('{form.field.focus.ring'),
+    transitionDuration: '{transition.duration}',
+  },
+}
+
+/**
+ * The look of the house for PrimeVue: square-cut, ruled, without shadows; colours from tokens.css.
+ * Only what every page needs stands here; a component used in one place brings its tokens along (theme/add-tokens.ts).
+ */
+export const weighbackPreset = {
+  primitive: {
+    borderRadius: { none: '0', xs: '2px', sm: '2px', md: '3px', lg: '3px', xl: '4px' },
+    red: vermilion,
+    orange: amber,
+    amber,
+    yellow: amber,
+    green: spruce,
+    sky: steel,
+    purple: steel,
+  },
+  semantic: {
+    transitionDuration: '120ms',
+    focusRing: { width: '3px', style: 'solid', color: house('focus'), offset: '2px', shadow: 'none' },
+    disabledOpacity: '0.55',
+    iconSize: '1rem',
+    anchorGutter: '2px',
+    primary: spruce,
+    formField: {
+      paddingX: '0.75rem',
+      paddingY: '0.5625rem',
+      borderRadius: house('radius'),
+      focusRing: { width: '2px', style: 'solid', color: house('focus'), offset: '-1px', shadow: 'none' },
+      transitionDuration: '{transition.duration}',
+      sm: { fontSize: '0.875rem', paddingX: '0.625rem', paddingY: '0.375rem' },
+      lg: { fontSize: '1.125rem', paddingX: '0.875rem', paddingY: '0.625rem' },
+    },
+    list: {
+      padding: '0',
+      gap: '0',
+      header: { padding: '0.5rem 0.75rem' },
+      option: { padding: '0.625rem 0.75rem', borderRadius: '0' },
+      optionGroup: { padding: '0.5rem 0.75rem', fontWeight: '600' },
+    },
+    content: { borderRadius: house('radius') },
+    mask: { transitionDuration: '200ms' },
+    navigation: {
+      list: { padding: '0', gap: '0' },
+      item: { padding: '0.625rem 0.75rem', borderRadius: '0', gap: '0.5rem' },
+      submenuLabel: { padding: '0.5rem 0.75rem', fontWeight: '600' },
+      submenuIcon: { size: '0.875rem' },
+    },
+    overlay: {
+      select: { borderRadius: house('radius'), shadow: house('shadow-high') },
+      popover: { borderRadius: house('radius'), padding: '0.75rem', shadow: house('shadow-high') },
+      modal: { borderRadius: '4px', padding: '1.25rem', shadow: house('shadow-high') },
+      navigation: { shadow: house('shadow-high') },
+    },
+    colorScheme: { light: scheme, dark: scheme },
+  },
+  components: {
+    button: {
+      root: {
+        borderRadius: '{form.field.border.radius}',
+        roundedBorderRadius: '2rem',
+        gap: '0.5rem',
+        paddingX: '1.0625rem',
+        paddingY: '0.5625rem',
+        iconOnlyWidth: '2.5rem',
+        sm: { fontSize: '0.875rem', paddingX: '0.75rem', paddingY: '0.375rem', iconOnlyWidth: '2rem' },
+        lg: { fontSize: '1.125rem', paddingX: '1.25rem', paddingY: '0.75rem', iconOnlyWidth: '3rem' },
+        label: { fontWeight: '600' },
+        raisedShadow: 'none',
+        focusRing: { width: '{focus.ring.width}', style: '{focus.ring.style}', offset: '{focus.ring.offset}' },
+        badgeSize: '1rem',
+        transitionDuration: '{transition.duration}',
       },
+      colorScheme: { light: buttonScheme, dark: buttonScheme },
     },
-    outlined: {
-      secondary: { hoverBackground: house('sunk'), activeBackground: house('rule'), borderColor: house('field-line'), color: house('ink') },
-      danger: { hoverBackground: house('over-wash'), activeBackground: house('over-wash'), borderColor: house('over-text'), color: house('over-text') },
-    },
-    text: {
-      primary: { hoverBackground: house('spruce-wash'), activeBackground: house('spruce-wash'), color: house('link') },
-      secondary: { hoverBackground: house('sunk'), activeBackground: house('rule'), color: house('ink') },
-    },
+    inputtext: textField,
+    textarea: textField,
+  },
+} satisfies Preset
+
+function filled(background: string, hover: string, press: string, color: string) {
+  return {
+    background, hoverBackground: hover, activeBackground: press,
+    borderColor: background, hoverBorderColor: hover, activeBorderColor: press,
+    color, hoverColor: color, activeColor: color,
+    focusRing: { color: house('focus'), shadow: 'none' },
   }
+}
+
+function lined(hoverBackground: string, activeBackground: string, borderColor: string, color: string) {
+  return { hoverBackground, activeBackground, borderColor, color }
+}
+
+function ring(path: string) {
+  return { width: `${path}.width}`, style: `${path}.style}`, color: `${path}.color}`, offset: `${path}.offset}`, shadow: `${path}.shadow}` }
 }
