@@ -5,7 +5,7 @@ import { COLOUR, MARGIN, STYLE, type PaperSize, type TextStyle } from './look'
 import { Pen } from './pen'
 
 type Document = InstanceType<typeof PDFDocument>
-type Element = PDFKit.Mixins.PDFStructureElement
+export type Element = ReturnType<Document['struct']>
 
 export interface SheetSetup {
   paper: PaperSize

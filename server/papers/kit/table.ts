@@ -1,5 +1,5 @@
 import { COLOUR, MARGIN, STYLE, type TextStyle } from './look'
-import type { Sheet } from './sheet'
+import type { Element, Sheet } from './sheet'
 import { drawShape, type Shape } from './shapes'
 
 export interface Column {
@@ -134,7 +134,7 @@ function turn(sheet: Sheet, repeatHead: () => void): void {
 
 function drawPart(
   sheet: Sheet, columns: readonly Column[], cells: readonly Laid[], row: Row, starts: readonly number[], widths: readonly number[],
-  elements: readonly PDFKit.Mixins.PDFStructureElement[], isFirst: boolean,
+  elements: readonly Element[], isFirst: boolean,
 ): void {
   const top = sheet.y
   const height = heightOf(sheet, cells)

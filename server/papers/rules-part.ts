@@ -1,0 +1,47 @@
+import type { WireThreshold } from '../../shared/api/places'
+import { percent } from '../../shared/leak-rate/percent'
+import { STYLE } from './kit/look'
+import type { Sheet } from './kit/sheet'
+import { drawTable } from './kit/table'
+import type { Words } from './words'
+
+/** A threshold and the circuits' category for which it is in force. */
+export interface ThresholdOnPaper extends WireThreshold {
+  category: string
+}
+
+/**
+ * The thresholds that a paper measures against, with what must stand beside them wherever they are shown:
+ * source, date checked, on what the figure rests, who is responsible, and who decides.
+ */
+export async function drawRules(sheet: Sheet, words: Words, thresholds: readonly ThresholdOnPaper[]): Promise<void> {
+  await sheet.within('Sect', async () => {
+    sheet.heading(2, words.text('rules.title'), STYLE.heading, 110)
+    if (thresholds.length === 0) sheet.text(words.text('rules.none'), STYLE.body, { after: 4 })
+    else await drawTable(sheet, {
+      columns: [
+        { title: words.text('rules.pack'), width: { share: 20 }, isRowHeader: true },
+        { title: words.text('rules.category'), width: { share: 20 } },
+        { title: words.text('rules.threshold'), unit: words.text('rules.perYear'), width: { share: 15 }, align: 'right' },
+        { title: words.text('rules.source'), width: { share: 20 } },
+        { title: words.text('rules.basis'), width: { share: 27 } },
+        { title: words.text('rules.checkedOn'), width: { share: 14 } },
+      ],
+      rows: distinct(thresholds).map((threshold) => ({
+        cells: [
+          words.text(`pack.${threshold.packId}`), words.text(`category.${threshold.category}`),
+          words.text('rules.above', { percent: words.percent(percent(threshold.percent)) }),
+          threshold.cite, words.text(`rules.basisOf.${threshold.basis}`), words.date(threshold.checkedOn),
+        ],
+      })),
+    })
+    sheet.text(words.text('rules.responsible'), STYLE.small, { after: 3 })
+    sheet.text(words.text('rules.caution'), STYLE.smallStrong, { after: 10 })
+  })
+}
+
+function distinct(thresholds: readonly ThresholdOnPaper[]): ThresholdOnPaper[] {
+  const byKey = new Map(thresholds.map((threshold) =>
+    [[threshold.packId, threshold.category, threshold.percent, threshold.cite, threshold.checkedOn].join(' '), threshold]))
+  return [...byKey.keys()].sort().flatMap((key) => byKey.get(key) ?? [])
+}

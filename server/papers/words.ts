@@ -1,0 +1,80 @@
+import { LB_KG, toKgText, type Mass } from '../../shared/mass/mass'
+import type { Percent } from '../../shared/leak-rate/percent'
+import type { PlainDate } from '../../shared/dates/plain-date'
+import { Exact } from '../../shared/units/decimal'
+import { say } from '../language'
+
+/** [digits after the point] of pounds that are written out exactly; more would be a division that does not end */
+const MOST_POUND_DIGITS = 6
+const MOST_RATE_DIGITS = 8
+
+/** How one paper says things: in the language of the person who asks and the mass unit of the place. */
+export interface Words {
+  locale: string
+  massUnit: 'lb' | 'kg'
+  text: (key: string, params?: Record<string, unknown>) => string
+  /** A number alone, two digits after the point, in the unit of the place. */
+  mass: (mass: Mass) => string
+  /** "60.00 lb (27.22 kg)" */
+  massInBoth: (mass: Mass) => string
+  /** Exact kilograms, and pounds that are exact where they can be. */
+  massExact: (mass: Mass) => string
+  /** A rate or threshold without its sign. */
+  percent: (percent: Percent, against?: Percent | null) => string
+  date: (date: PlainDate) => string
+  /** An instant with its zone. */
+  instant: (instant: Date, timeZone: string) => string
+  /** What is missing is said, never left out. */
+  orMissing: (value: string | null) => string
+}
+
+export function wordsFor(locale: string, jurisdiction: string): Words {
+  const massUnit = jurisdiction.startsWith('US') ? 'lb' : 'kg'
+  const text = (key: string, params: Record<string, unknown> = {}): string => say(locale, `papers.${key}`, params)
+  const number = numbersIn(locale)
+  const dates = new Intl.DateTimeFormat(locale, { dateStyle: 'medium', timeZone: 'UTC' })
+  const pounds = (mass: Mass): Exact => mass.dividedBy(LB_KG)
+  const lb = (mass: Mass): string => text('unit.lb', { mass: number(pounds(mass), 2) })
+  const kg = (mass: Mass): string => text('unit.kg', { mass: number(mass, 2) })
+  return {
+    locale, massUnit, text,
+    mass: (mass) => number(massUnit === 'lb' ? pounds(mass) : mass, 2),
+    massInBoth: (mass) => (massUnit === 'lb' ? text('unit.both', { first: lb(mass), second: kg(mass) }) : text('unit.both', { first: kg(mass), second: lb(mass) })),
+    massExact: (mass) => exactMass(text, number, mass),
+    percent: (percent, against = null) => percentText(number, percent, against),
+    date: (date) => dates.format(new Date(`${date}T00:00:00Z`)),
+    instant: (instant, timeZone) => new Intl.DateTimeFormat(locale, {
+      year: 'numeric', month: 'short', day: 'numeric', hour: '2-digit', minute: '2-digit', timeZone, timeZoneName: 'short',
+    }).format(instant),
+    orMissing: (value) => value || text('notRecorded'),
+  }
+}
+
+type Numbers = (value: Exact, least: number, most?: number) => string
+
+/** Writes exact decimals with at least and at most so many digits after the point, halves away from zero. */
+function numbersIn(locale: string): Numbers {
+  const formats = new Map<string, Intl.NumberFormat>()
+  return (value, least, most = least) => {
+    const key = `${least} ${most}`
+    const format = formats.get(key) ?? new Intl.NumberFormat(locale, { minimumFractionDigits: least, maximumFractionDigits: most })
+    formats.set(key, format)
+    return format.format(value.toFixed(most, Exact.ROUND_HALF_UP) as `${number}`) // Intl reads exact text; TypeScript wants it spelled as a number
+  }
+}
+
+function exactMass(text: Words['text'], number: Numbers, mass: Mass): string {
+  const kilograms = text('unit.kg', { mass: number(mass, 2, Math.max(2, mass.decimalPlaces())) })
+  const pounds = mass.dividedBy(LB_KG).toDecimalPlaces(MOST_POUND_DIGITS)
+  return pounds.times(LB_KG).equals(mass)
+    ? text('unit.exactBoth', { pounds: number(pounds, 2, MOST_POUND_DIGITS), kilograms })
+    : text('unit.exactKilograms', { pounds: number(pounds, 2, 4), kilograms, exact: toKgText(mass) })
+}
+
+/** Two digits, and more where two would make a rate above a threshold look equal to it. */
+function percentText(number: Numbers, percent: Percent, against: Percent | null): string {
+  let digits = 2
+  if (against && !percent.equals(against))
+    while (digits < MOST_RATE_DIGITS && percent.toDecimalPlaces(digits, Exact.ROUND_HALF_UP).equals(against)) digits += 1
+  return number(percent, against === null && percent.isInteger() ? 0 : 2, digits)
+}
