@@ -1,5 +1,9 @@
-import { createCoreContext, translate } from '@intlify/core-base'
+import { compile, createCoreContext, registerMessageCompiler, registerMessageResolver, resolveValue, translate } from '@intlify/core-base'
 import { en } from '../shared/language/en'
+
+// core-base alone looks up flat keys and leaves messages as they are: areas and {named} parts are added here
+registerMessageResolver(resolveValue)
+registerMessageCompiler(compile)
 
 type LocaleMessages = { [key: string]: string | LocaleMessages }
 const DEFAULT_LOCALE = 'en'
