@@ -303,6 +303,7 @@ export const en = {
     beam: {
       name: 'Beam',
       charge: 'Book charge',
+      fullOf: 'Full charge',
       full: 'full {mass}',
       fullUnknown: 'full charge not known',
       rate: 'Leak rate',
@@ -325,7 +326,7 @@ export const en = {
     navigation: 'Main',
     menu: 'More',
     menuOf: 'Everything',
-    personMenu: 'Menu of {name}',
+    personMenu: '{name}, menu',
     online: 'On line',
     offline: 'No signal',
     offlineSince: 'No signal since {time}',

@@ -1,3 +1,4 @@
+import type { Category } from '../../../shared/rules/categories'
 import type { WireHistory } from '../../../shared/api/places'
 import type { Tx } from '../../database'
 
@@ -8,7 +9,7 @@ export interface CircuitRecord {
   site_id: string
   system_id: string
   refrigerant: string
-  category: string
+  category: Category
   status: string
   commissioned_on: string | null
   installed_on: string | null

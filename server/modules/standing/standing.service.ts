@@ -7,7 +7,8 @@ import { isAbove, toPercentText, toTenThousandths, type Percent } from '../../..
 import { rateAdditions, type RatedAddition } from '../../../shared/leak-rate/rated-additions'
 import { isPositive, kg, toKgText } from '../../../shared/mass/mass'
 import type { Tx } from '../../database'
-import { decisionsFor, lowestThreshold, thresholdsOn } from './rules'
+import { lowestThreshold } from '../../../shared/rules/engine'
+import { decisionsFor, thresholdsOn } from './rules'
 import * as repository from './history.repository'
 import { type CircuitRecord } from './history.repository'
 

@@ -1,0 +1,74 @@
+import document from './data/saturation.json'
+
+/** A row of the table: [°C, bubble kPa abs, dew kPa abs, saturated liquid kg/m³ at the bubble point, saturated vapour kg/m³ at the dew point]. */
+type Row = readonly number[]
+interface Table { rows: readonly Row[] }
+
+const tables = document.refrigerants as unknown as Record<string, Table>
+const KELVIN = 273.15
+
+export const SATURATION_SOURCE = `${document.source}, Bell et al., Ind. Eng. Chem. Res. 53 (2014) 2498`
+
+/** A value from the table, or the range that the table has. Nothing is extrapolated. */
+export type Looked = { ok: true; value: number } | { ok: false; code: 'outside-table'; lowest: number; highest: number } | { ok: false; code: 'no-table' }
+
+const COLUMN = { bubbleKpa: 1, dewKpa: 2, liquidDensity: 3, vapourDensity: 4 } as const
+export type SaturationColumn = keyof typeof COLUMN
+
+interface Curve { x: number[]; y: number[]; slope: number[] }
+const curves = new Map<string, Curve>()
+
+/**
+ * A saturation property at a temperature, by cubic interpolation of its logarithm in 1/T.
+ *
+ * @param celsius  [°C]
+ * @returns [kPa absolute] or [kg/m³]
+ */
+export function saturationAt(refrigerant: string, column: SaturationColumn, celsius: number): Looked {
+  const curve = curveOf(refrigerant, column)
+  if (!curve) return { ok: false, code: 'no-table' }
+  const x = 1 / (celsius + KELVIN)
+  const first = curve.x[0] ?? 0
+  const last = curve.x.at(-1) ?? 0
+  if (!(x >= first && x <= last)) return { ok: false, code: 'outside-table', lowest: 1 / last - KELVIN, highest: 1 / first - KELVIN }
+  return { ok: true, value: Math.exp(interpolate(curve, x)) }
+}
+
+/** ln of a column over 1/T, ascending in 1/T, with the slope of a cubic Hermite spline at each row. */
+function curveOf(refrigerant: string, column: SaturationColumn): Curve | null {
+  const key = `${refrigerant} ${column}`
+  const known = curves.get(key)
+  if (known) return known
+  const table = tables[refrigerant]
+  if (!table) return null
+  const rows = [...table.rows].reverse()
+  const x = rows.map((row) => 1 / ((row[0] ?? 0) + KELVIN))
+  const y = rows.map((row) => Math.log(row[COLUMN[column]] ?? 0))
+  const curve = { x, y, slope: x.map((_at, index) => slopeAt(x, y, index)) }
+  curves.set(key, curve)
+  return curve
+}
+
+/** The slope of the parabola through a row and its neighbours. */
+function slopeAt(x: number[], y: number[], index: number): number {
+  const middle = Math.min(Math.max(index, 1), x.length - 2)
+  const [x0 = 0, x1 = 0, x2 = 0] = x.slice(middle - 1, middle + 2)
+  const [y0 = 0, y1 = 0, y2 = 0] = y.slice(middle - 1, middle + 2)
+  const at = x[index] ?? 0
+  return y0 * (2 * at - x1 - x2) / ((x0 - x1) * (x0 - x2)) + y1 * (2 * at - x0 - x2) / ((x1 - x0) * (x1 - x2)) + y2 * (2 * at - x0 - x1) / ((x2 - x0) * (x2 - x1))
+}
+
+function interpolate({ x, y, slope }: Curve, at: number): number {
+  let low = 0
+  let high = x.length - 1
+  while (high - low > 1) {
+    const middle = (low + high) >> 1
+    if ((x[middle] ?? 0) <= at) low = middle
+    else high = middle
+  }
+  const [x0 = 0, y0 = 0, m0 = 0] = [x[low], y[low], slope[low]]
+  const [x1 = 0, y1 = 0, m1 = 0] = [x[high], y[high], slope[high]]
+  const h = x1 - x0
+  const t = (at - x0) / h
+  return (1 + 2 * t) * (1 - t) ** 2 * y0 + t * (1 - t) ** 2 * h * m0 + t * t * (3 - 2 * t) * y1 + t * t * (t - 1) * h * m1
+}
