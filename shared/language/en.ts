@@ -526,7 +526,7 @@ export const en = {
     beam: {
       rate: '{rate} %',
       threshold: 'threshold {threshold} %',
-      zero: '0',
+      caption: 'Highest leak rate in the period',
       spoken: 'Highest leak rate in the period: {rate} % on {date}, against a threshold of {threshold} %. {standing}.',
     },
     rules: {
