@@ -4,7 +4,7 @@ import type { Percent } from '../../shared/leak-rate/percent'
 import { sumMass, type Mass } from '../../shared/mass/mass'
 import { drawBeam } from './kit/beam'
 import { drawFacts } from './kit/facts'
-import { COLOUR, paperSizeOf, STYLE } from './kit/look'
+import { paperSizeOf, STYLE } from './kit/look'
 import { drawMasthead } from './kit/masthead'
 import { Sheet } from './kit/sheet'
 import type { Shape } from './kit/shapes'
@@ -204,9 +204,7 @@ function totalRows(words: Words, circuits: readonly SummaryCircuit[]): Row[] {
 }
 
 async function drawCircuit(sheet: Sheet, words: Words, summary: LeakRateSummary, circuit: SummaryCircuit): Promise<void> {
-  sheet.need(200)
-  sheet.rule(sheet.y, { colour: COLOUR.spruce, width: 0.8 })
-  sheet.space(7)
+  sheet.begin(180)
   sheet.heading(2, `${circuit.systemTag} · ${circuit.name}`, STYLE.heading)
   drawFacts(sheet, [
     { label: words.text('summary.system'), value: [circuit.systemName, circuit.location].filter(Boolean).join(', ') },
@@ -238,7 +236,7 @@ function drawHighest(sheet: Sheet, words: Words, highest: SummaryAddition, shape
   const params = { rate, threshold, date: words.date(highest.occurredOn), standing: words.text(`standing.${shape}`) }
   drawBeam(sheet, {
     rate: highest.rate, threshold: highest.threshold, standing: shape,
-    words: { rate: words.text('beam.rate', params), threshold: words.text('beam.threshold', params), zero: words.text('beam.zero'), spoken: words.text('beam.spoken', params) },
+    words: { rate: words.text('beam.rate', params), threshold: words.text('beam.threshold', params), caption: words.text('beam.caption'), spoken: words.text('beam.spoken', params) },
   })
 }
 
@@ -278,13 +276,13 @@ async function drawAdditions(sheet: Sheet, words: Words, { method }: LeakRateSum
   const number = (title: string, sub: string, points: number) => ({ title: words.text(title), unit: sub, width: { points }, align: 'right' as const })
   await drawTable(sheet, {
     columns: [
-      { title: words.text('date'), width: { points: 60 }, isRowHeader: true },
+      { title: words.text('date'), width: { points: 58 }, isRowHeader: true },
       { title: words.text('technician'), width: { share: 1 } },
-      number('summary.amount', unit, 46), number('summary.counted', unit, 46),
-      number(method === 'rolling' ? 'summary.inWindow' : 'summary.forLeak', unit, 48), number('summary.days', words.text('unit.days'), 32),
-      number('fullCharge', unit, 50), number('summary.rate', words.text('unit.percent'), 46), number('rules.threshold', words.text('unit.percent'), 47),
-      { title: words.text('summary.result'), width: { points: 66 } },
-      { title: words.text('summary.notes'), width: { points: 30 } },
+      number('summary.amount', unit, 41), number('summary.counted', unit, 41),
+      number(method === 'rolling' ? 'summary.inWindow' : 'summary.forLeak', unit, 44), number('summary.days', words.text('unit.days'), 30),
+      number('fullCharge', unit, 43), number('summary.rate', words.text('unit.percent'), 45), number('rules.threshold', words.text('unit.percent'), 45),
+      { title: words.text('summary.result'), width: { points: 68 } },
+      { title: words.text('summary.notes'), width: { points: 25 } },
     ],
     rows: additions.map((addition) => additionRow(words, addition, notes)),
   })

@@ -142,9 +142,7 @@ function certificateOf(words: Words, { certificateNumber, certificateType }: { c
 }
 
 async function drawCircuit(sheet: Sheet, words: Words, record: ServiceRecord, circuit: RecordCircuit): Promise<void> {
-  sheet.need(210)
-  sheet.rule(sheet.y, { colour: COLOUR.spruce, width: 0.8 })
-  sheet.space(7)
+  sheet.begin(210)
   sheet.heading(2, `${circuit.systemTag} · ${circuit.name}`, STYLE.heading)
   drawFacts(sheet, [
     { label: words.text('record.appliance'), value: [circuit.systemName, circuit.location].filter(Boolean).join(', ') },
@@ -187,7 +185,7 @@ function drawEntry(sheet: Sheet, words: Words, record: ServiceRecord, circuit: R
   sheet.tagged('P', () => sheet.pen.write(kind, left, top + 6, STYLE.heading))
   sheet.tagged('P', () => sheet.pen.write(`${words.date(entry.occurredOn)} · ${entry.refrigerant}`, left, top + 23, STYLE.value))
   sheet.tagged('P', () => sheet.pen.write(amount, right - sheet.pen.width(amount, STYLE.figure), top + 3, STYLE.figure))
-  sheet.tagged('P', () => sheet.pen.write(exact, right - sheet.pen.width(exact, STYLE.small), top + 27, { ...STYLE.small, hasTabularFigures: true }))
+  sheet.tagged('P', () => sheet.pen.write(exact, right - sheet.pen.width(exact, STYLE.small), top + 27, STYLE.small))
   sheet.y = top + TICKET_HEAD + 6
   if (entry.reversal) drawReversal(sheet, words, entry.reversal)
   drawFacts(sheet, entryFacts(words, entry), { columns: 3, x: left, width: sheet.width - 2 * TICKET_PAD })

@@ -6,7 +6,7 @@ import { say } from '../language'
 
 /** [digits after the point] of pounds that are written out exactly; more would be a division that does not end */
 const MOST_POUND_DIGITS = 6
-const MOST_RATE_DIGITS = 8
+const MOST_RATE_DIGITS = 4
 
 /** How one paper says things: in the language of the person who asks and the mass unit of the place. */
 export interface Words {

@@ -15,7 +15,7 @@ export function drawBeam(sheet: Sheet, { rate, threshold, standing, words }: {
   rate: Percent
   threshold: Percent
   standing: Shape
-  words: { rate: string; threshold: string; zero: string; spoken: string }
+  words: { rate: string; threshold: string; caption: string; spoken: string }
 }): void {
   sheet.need(HEIGHT)
   const top = sheet.y
@@ -40,7 +40,9 @@ export function drawBeam(sheet: Sheet, { rate, threshold, standing, words }: {
   sheet.tagged('Figure', () => {
     sheet.pen.write(words.rate, rateX, top, rateStyle)
     sheet.pen.write(words.threshold, Math.min(fulcrum + 8, sheet.right - thresholdWidth), y + 3, STYLE.small)
-    if (rateX > sheet.left + CLEAR) sheet.pen.write(words.zero, sheet.left, y + 3, STYLE.small)
+    const captionWidth = sheet.pen.width(words.caption, STYLE.label)
+    const captionX = rateX > sheet.left + captionWidth + CLEAR ? sheet.left : sheet.right - captionWidth
+    sheet.pen.write(words.caption, captionX, top + 1, STYLE.label)
   }, { alt: words.spoken })
   sheet.y = top + HEIGHT + 2
 }

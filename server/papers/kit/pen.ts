@@ -12,6 +12,7 @@ interface Shaped {
 
 const MOST_SHAPED = 20_000 // words kept per font and document; beyond it the store is emptied
 const FIGURES = ['tnum']
+const NUMBER = /^[\d.,−–%]+$/ // a hyphen of tabular width would tear names such as R-410A apart
 const MISSING = '0000' // the glyph of a sign that the font lacks
 const UNSEEN = /[\u200b-\u200f\u202a-\u202e\u2060-\u2069\ufeff]/g // turn text around or take no room: no place in a record
 // eslint-disable-next-line no-control-regex -- control signs are what is looked for
@@ -90,15 +91,16 @@ export class Pen {
     return [...lines, line]
   }
 
-  /** A word in pieces that fit a line. */
+  /** A word in pieces that fit a line, parted after a hyphen where it has one. */
   private fitting(word: string, style: TextStyle, width: number): string[] {
     if (this.width(word, style) <= width) return [word]
     const parts: string[] = []
     let part = ''
     for (const sign of word) {
       if (part && this.width(part + sign, style) > width) {
-        parts.push(part)
-        part = ''
+        const cut = part.lastIndexOf('-') + 1 || part.length
+        parts.push(part.slice(0, cut))
+        part = part.slice(cut)
       }
       part += sign
     }
@@ -112,10 +114,11 @@ export class Pen {
   }
 
   private shape(word: string, style: TextStyle): Shaped {
-    const key = `${style.weight}${style.hasTabularFigures ? '#' : ' '}${word}`
+    const isNumber = style.hasTabularFigures === true && NUMBER.test(word)
+    const key = `${style.weight}${isNumber ? '#' : ' '}${word}`
     const known = this.shaped.get(key)
     if (known) return known
-    const [codes, positions] = this.fonts[style.weight].encode(word, style.hasTabularFigures ? FIGURES : undefined)
+    const [codes, positions] = this.fonts[style.weight].encode(word, isNumber ? FIGURES : undefined)
     const glyphs: string[] = []
     let width = 0
     positions.forEach((position, index) => {

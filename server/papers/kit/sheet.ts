@@ -123,6 +123,14 @@ export class Sheet {
     if (this.y + height > this.bottom) this.newPage()
   }
 
+  /** Begins a part of its own, which has at least so much room [pt], under a rule. */
+  begin(height: number): void {
+    this.need(height)
+    if (this.y === MARGIN.top) return
+    this.rule(this.y, { colour: COLOUR.spruce, width: 0.8 })
+    this.space(7)
+  }
+
   newPage(): void {
     this.document.addPage()
     this.y = MARGIN.top

@@ -27,31 +27,33 @@ export interface Row {
 
 const PADDING = { x: 4, top: 2.6, bottom: 2.8 } // [pt]
 const SHAPE_ROOM = 9 // [pt]
+const HEAD_ROOM = 40 // [pt] of a repeated head
+const TURN_ROOM = 7 // [pt] between a column that ends right and one that begins left
 
 interface Laid {
   lines: string[]
   style: TextStyle
   shape?: Shape
+  hasShapeRoom?: boolean
 }
 
 /** A table with ruled lines, its head repeated on every page. A row goes over to the next page whole where it fits there. */
 export async function drawTable(sheet: Sheet, { columns, rows, summary }: { columns: readonly Column[]; rows: readonly Row[]; summary?: string }): Promise<void> {
-  const widths = widthsOf(columns, sheet.width)
-  const starts = startsOf(widths, sheet.left)
-  const head = columns.map((column, index) => headOf(sheet, column, inner(widths[index])))
+  const grid = gridOf(columns, sheet.left, sheet.width)
+  const head = grid.map(({ column, width }) => headOf(sheet, column, inner(width)))
   const table = sheet.open('Table', summary ? { alt: summary } : {})
   sheet.need(heightOf(sheet, head) + 2 * sheet.pen.lineHeight(STYLE.cell) + 8)
-  drawHead(sheet, columns, head, starts, widths, false)
+  drawHead(sheet, grid, head, false)
   for (const row of rows) {
-    const cells = row.cells.map((cell, index) => lay(sheet, cell, row, inner(widths[index])))
-    drawRow(sheet, columns, cells, row, starts, widths, () => drawHead(sheet, columns, head, starts, widths, true))
+    const cells = grid.map(({ width }, index) => lay(sheet, row.cells[index] ?? '', row, inner(width)))
+    drawRow(sheet, grid, cells, row, () => drawHead(sheet, grid, head, true))
     await sheet.breathe()
   }
   sheet.close(table)
   sheet.space(8)
 }
 
-const inner = (width = 0): number => width - 2 * PADDING.x
+const inner = (width: number): number => width - 2 * PADDING.x
 
 function widthsOf(columns: readonly Column[], whole: number): number[] {
   const fixed = columns.reduce((sum, { width }) => sum + ('points' in width ? width.points : 0), 0)
@@ -59,12 +61,22 @@ function widthsOf(columns: readonly Column[], whole: number): number[] {
   return columns.map(({ width }) => ('points' in width ? width.points : ((whole - fixed) * width.share) / shares))
 }
 
-function startsOf(widths: readonly number[], left: number): number[] {
+/** Where each column begins and how wide it is, with its padding [pt]. */
+interface Place {
+  column: Column
+  start: number
+  width: number
+}
+
+function gridOf(columns: readonly Column[], left: number, whole: number): Place[] {
+  const widths = widthsOf(columns, whole)
   let x = left
-  return widths.map((width) => {
-    const start = x
-    x += width
-    return start
+  return columns.map((column, index) => {
+    const isTurn = column.align !== 'right' && columns[index - 1]?.align === 'right'
+    const indent = isTurn ? TURN_ROOM : 0
+    const place = { column, start: x + indent, width: (widths[index] ?? 0) - indent }
+    x += widths[index] ?? 0
+    return place
   })
 }
 
@@ -81,80 +93,77 @@ function lay(sheet: Sheet, cell: Cell | string, row: Row, width: number): Laid {
 const heightOf = (sheet: Sheet, cells: readonly Laid[]): number =>
   Math.max(...cells.map((cell) => cell.lines.length * sheet.pen.lineHeight(cell.style))) + PADDING.top + PADDING.bottom
 
-function drawHead(sheet: Sheet, columns: readonly Column[], head: readonly Laid[], starts: readonly number[], widths: readonly number[], isRepeated: boolean): void {
+function drawHead(sheet: Sheet, grid: readonly Place[], head: readonly Laid[], isRepeated: boolean): void {
   const height = heightOf(sheet, head)
   const top = sheet.y
   sheet.rule(top, { colour: COLOUR.spruce, width: 1 })
-  const write = (index: number): void => {
-    const cell = head[index]
-    const lineHeight = sheet.pen.lineHeight(STYLE.label)
-    const blank = height - PADDING.top - PADDING.bottom - (cell?.lines.length ?? 0) * lineHeight
-    cell?.lines.forEach((line, at) => writeLine(sheet, line, cell.style, columns[index], starts[index] ?? 0, widths[index] ?? 0, top + PADDING.top + blank + at * lineHeight, 0))
+  const write = (place: Place, index: number): void => {
+    const lines = head[index]?.lines ?? []
+    const blank = height - PADDING.top - PADDING.bottom - lines.length * sheet.pen.lineHeight(STYLE.label)
+    writeLines(sheet, place, { lines, style: STYLE.label }, top + PADDING.top + blank)
   }
   // on the following pages the head is there for the eye; read aloud it would interrupt the rows
-  if (isRepeated) sheet.ornament(() => columns.forEach((_column, index) => write(index)), 'Pagination')
+  if (isRepeated) sheet.ornament(() => grid.forEach(write), 'Pagination')
   else {
     const row = sheet.open('TR')
-    columns.forEach((_column, index) => sheet.tagged('TH', () => write(index), { scope: 'Column' }))
+    grid.forEach((place, index) => sheet.tagged('TH', () => write(place, index), { scope: 'Column' }))
     sheet.close(row)
   }
   sheet.y = top + height
   sheet.rule(sheet.y, { colour: COLOUR.spruce, width: 0.5 })
 }
 
-function drawRow(sheet: Sheet, columns: readonly Column[], cells: Laid[], row: Row, starts: readonly number[], widths: readonly number[], repeatHead: () => void): void {
+/** A row on one page where it fits a page at all; a longer one goes on over as many as it takes. */
+function drawRow(sheet: Sheet, grid: readonly Place[], cells: readonly Laid[], row: Row, repeatHead: () => void): void {
+  const turn = (): void => {
+    sheet.newPage()
+    repeatHead()
+  }
   const whole = heightOf(sheet, cells)
-  const pageRoom = sheet.bottom - 90 - MARGIN.top
-  if (sheet.y + whole > sheet.bottom && whole < pageRoom) turn(sheet, repeatHead)
+  const pageRoom = sheet.bottom - MARGIN.top - HEAD_ROOM
+  if (sheet.y + whole > sheet.bottom && whole < pageRoom) turn()
   const tr = sheet.open('TR')
-  const elements = cells.map((_cell, index) => {
-    const element = columns[index]?.isRowHeader ? sheet.open('TH', { scope: 'Row' }) : sheet.open('TD')
+  const elements = grid.map(({ column }) => {
+    const element = column.isRowHeader ? sheet.open('TH', { scope: 'Row' }) : sheet.open('TD')
     sheet.suspend(element)
     return element
   })
-  let done = 0
   const most = Math.max(...cells.map((cell) => cell.lines.length))
-  do {
-    const lineHeight = Math.max(...cells.map((cell) => sheet.pen.lineHeight(cell.style)))
+  const lineHeight = Math.max(...cells.map((cell) => sheet.pen.lineHeight(cell.style)))
+  for (let done = 0; done < most;) {
     const fitting = Math.max(1, Math.floor((sheet.bottom - sheet.y - PADDING.top - PADDING.bottom) / lineHeight))
-    const count = Math.min(most - done, fitting)
-    const part = cells.map((cell) => ({ ...cell, lines: cell.lines.slice(done, done + count) }))
-    drawPart(sheet, columns, part, row, starts, widths, elements, done === 0)
-    done += count
-    if (done < most) turn(sheet, repeatHead)
-  } while (done < most)
+    const part = cells.map((cell) => ({ ...cell, lines: cell.lines.slice(done, done + fitting), shape: done === 0 ? cell.shape : undefined, hasShapeRoom: cell.shape !== undefined }))
+    drawPart(sheet, grid, part, row, elements)
+    done += fitting
+    if (done < most) turn()
+  }
   for (const element of elements) element.end()
   sheet.close(tr)
 }
 
-function turn(sheet: Sheet, repeatHead: () => void): void {
-  sheet.newPage()
-  repeatHead()
-}
-
-function drawPart(
-  sheet: Sheet, columns: readonly Column[], cells: readonly Laid[], row: Row, starts: readonly number[], widths: readonly number[],
-  elements: readonly Element[], isFirst: boolean,
-): void {
+function drawPart(sheet: Sheet, grid: readonly Place[], cells: readonly Laid[], row: Row, elements: readonly Element[]): void {
   const top = sheet.y
   const height = heightOf(sheet, cells)
   sheet.ornament((document) => {
-    if (row.kind === 'alert') document.rect(sheet.left, top, sheet.width, height).fill(COLOUR.overWash)
-    if (row.kind === 'total') document.rect(sheet.left, top, sheet.width, height).fill(COLOUR.spruceWash)
+    const ground = row.kind === 'alert' ? COLOUR.overWash : row.kind === 'total' ? COLOUR.spruceWash : null
+    if (ground) document.rect(sheet.left, top + 0.3, sheet.width, height - 0.3).fill(ground)
     cells.forEach((cell, index) => {
-      if (cell.shape && isFirst) drawShape(document, cell.shape, (starts[index] ?? 0) + PADDING.x, top + PADDING.top + sheet.pen.lineHeight(cell.style) / 2)
+      if (cell.shape) drawShape(document, cell.shape, (grid[index]?.start ?? 0) + PADDING.x, top + PADDING.top + sheet.pen.lineHeight(cell.style) / 2)
     })
   })
-  cells.forEach((cell, index) => {
-    if (cell.lines.length === 0) return
-    elements[index]?.add(() => cell.lines.forEach((line, at) =>
-      writeLine(sheet, line, cell.style, columns[index], starts[index] ?? 0, widths[index] ?? 0, top + PADDING.top + at * sheet.pen.lineHeight(cell.style), cell.shape ? SHAPE_ROOM : 0)))
+  grid.forEach((place, index) => {
+    const cell = cells[index]
+    if (cell && cell.lines.length > 0) elements[index]?.add(() => writeLines(sheet, place, cell, top + PADDING.top))
   })
   sheet.y = top + height
   sheet.rule(sheet.y, row.kind === 'total' ? { colour: COLOUR.spruce, width: 0.8 } : {})
 }
 
-function writeLine(sheet: Sheet, line: string, style: TextStyle, column: Column | undefined, start: number, width: number, y: number, indent: number): void {
-  const x = column?.align === 'right' ? start + width - PADDING.x - sheet.pen.width(line, style) : start + PADDING.x + indent
-  sheet.pen.write(line, x, y, style)
+function writeLines(sheet: Sheet, { column, start, width }: Place, { lines, style, hasShapeRoom }: Laid, top: number): void {
+  lines.forEach((line, index) => {
+    const x = column.align === 'right'
+      ? start + width - PADDING.x - sheet.pen.width(line, style)
+      : start + PADDING.x + (hasShapeRoom ? SHAPE_ROOM : 0)
+    sheet.pen.write(line, x, top + index * sheet.pen.lineHeight(style), style)
+  })
 }
