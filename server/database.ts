@@ -45,7 +45,16 @@ export class Database {
    * only the customers the account is tied to. The settings end with the transaction.
    */
   inCompany<T>(scope: Scope, work: (tx: Tx) => Promise<T>): Promise<T> {
-    return this.source.transaction(async (tx) => {
+    return this.scoped('READ COMMITTED', scope, work)
+  }
+
+  /** As `inCompany`, with everything seen as it was at one moment, however many statements read it. */
+  inCompanyAtOneMoment<T>(scope: Scope, work: (tx: Tx) => Promise<T>): Promise<T> {
+    return this.scoped('REPEATABLE READ', scope, work)
+  }
+
+  private scoped<T>(isolation: 'READ COMMITTED' | 'REPEATABLE READ', scope: Scope, work: (tx: Tx) => Promise<T>): Promise<T> {
+    return this.source.transaction(isolation, async (tx) => {
       await tx.query(`select set_config('app.company_id', $1, true), set_config('app.customer_ids', $2, true)`, [
         scope.companyId,
         scope.customerIds === null ? '' : `{${scope.customerIds.join(',')}}`,

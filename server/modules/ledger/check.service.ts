@@ -10,10 +10,10 @@ const MOST_FAULTS = 200
 
 /**
  * Recomputes a company's whole ledger from what is stored: the content hash of each posting, each seal
- * over its postings and over the seal before it, the sums to zero, and every kept balance.
+ * over its postings and over the seal before it, the sums to zero, and every kept balance. The caller gives
+ * a transaction that sees one moment.
  */
 export async function checkLedger(tx: Tx, companyId: string, now: Date): Promise<LedgerCheck> {
-  await tx.query('set transaction isolation level repeatable read').catch(() => undefined)
   const faults: LedgerFault[] = []
   const fault = (code: LedgerFault['code'], place: Partial<LedgerFault>, detail: string): void => {
     if (faults.length < MOST_FAULTS) faults.push({ code, postingId: null, sealNumber: null, accountId: null, ...place, detail })

@@ -37,6 +37,6 @@ export const ledgerRoutes = (house: House): Route[] => [
   }),
   route({
     method: 'get', path: '/api/ledger/check', may: 'ledger.check', summary: 'Recompute the whole ledger and name every fault', perMinute: 6,
-    handle: ({ who }) => house.database.inCompany(who, (tx) => checkLedger(tx, who.companyId, house.now())),
+    handle: ({ who }) => house.database.inCompanyAtOneMoment(who, (tx) => checkLedger(tx, who.companyId, house.now())),
   }),
 ]
