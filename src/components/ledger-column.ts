@@ -9,6 +9,6 @@ export interface LedgerColumn<Row> {
   isNumber?: boolean
   /** CSS width on the desk. */
   width?: string
-  /** Left out on the phone, where the row says enough without it. */
-  isDeskOnly?: boolean
+  /** On the phone: in the corner beside the first column; on a line of its own without a label; not at all. */
+  onPhone?: 'corner' | 'whole' | 'hidden'
 }
