@@ -1,4 +1,4 @@
-import type { FULL_CHARGE_METHODS, LeakRateMethod } from '../../shared/api/places'
+import type { FULL_CHARGE_METHODS, LeakRateMethod, WirePackDecision } from '../../shared/api/places'
 import type { PlainDate } from '../../shared/dates/plain-date'
 import type { Percent } from '../../shared/leak-rate/percent'
 import { sumMass, type Mass } from '../../shared/mass/mass'
@@ -9,7 +9,7 @@ import { drawMasthead } from './kit/masthead'
 import { Sheet } from './kit/sheet'
 import type { Shape } from './kit/shapes'
 import { drawTable, type Row } from './kit/table'
-import { drawRules, type ThresholdOnPaper } from './rules-part'
+import { decisionsText, drawRules, type ThresholdOnPaper } from './rules-part'
 import { wordsFor, type Words } from './words'
 
 /** Who asked for a paper, and when. */
@@ -81,6 +81,7 @@ export interface SummaryCircuit {
   /** Entries of the period that were taken back. */
   reversedCount: number
   thresholds: ThresholdOnPaper[]
+  packs: WirePackDecision[]
 }
 
 export interface LeakRateSummary {
@@ -204,16 +205,17 @@ function totalRows(words: Words, circuits: readonly SummaryCircuit[]): Row[] {
 }
 
 async function drawCircuit(sheet: Sheet, words: Words, summary: LeakRateSummary, circuit: SummaryCircuit): Promise<void> {
-  sheet.begin(180)
+  sheet.begin(190)
   sheet.heading(2, `${circuit.systemTag} · ${circuit.name}`, STYLE.heading)
   drawFacts(sheet, [
     { label: words.text('summary.system'), value: [circuit.systemName, circuit.location].filter(Boolean).join(', ') },
     { label: words.text('refrigerant'), value: circuit.refrigerant, style: STYLE.strong },
-    { label: words.text('rules.category'), value: words.text(`category.${circuit.category}`) },
+    { label: words.text('rules.category'), value: words.common(`rules.categories.${circuit.category}`) },
     { label: words.text('summary.status'), value: words.text(`status.${circuit.status}`) },
     { label: words.text('summary.commissionedOn'), value: circuit.commissionedOn ? words.date(circuit.commissionedOn) : words.text('notRecorded') },
     { label: words.text('fullCharge'), value: fullChargeLine(words, circuit), style: STYLE.strong },
   ])
+  drawFacts(sheet, [{ label: words.text('rules.decisions'), value: decisionsText(words, circuit.packs), style: STYLE.small }], { columns: 1 })
   const highest = highestOf(circuit.additions)
   if (highest?.rate && highest.threshold) drawHighest(sheet, words, highest, shapeOf(circuit.additions))
   await drawFullCharges(sheet, words, circuit)
@@ -242,7 +244,7 @@ function drawHighest(sheet: Sheet, words: Words, highest: SummaryAddition, shape
 
 async function drawFullCharges(sheet: Sheet, words: Words, { fullCharges }: SummaryCircuit): Promise<void> {
   if (fullCharges.length === 0) return
-  sheet.heading(3, words.text('summary.fullCharges'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('summary.fullCharges'), STYLE.subheading, 70)
   const unit = words.text(`unit.name.${words.massUnit}`)
   await drawTable(sheet, {
     columns: [
@@ -266,7 +268,7 @@ export function methodOf(words: Words, { method, rangeLowKg, rangeHighKg }: Pick
 }
 
 async function drawAdditions(sheet: Sheet, words: Words, { method }: LeakRateSummary, { additions }: SummaryCircuit): Promise<void> {
-  sheet.heading(3, words.text('summary.additions'), STYLE.subheading, 60)
+  sheet.heading(3, words.text('summary.additions'), STYLE.subheading, 110)
   if (additions.length === 0) {
     sheet.text(words.text('summary.noAdditions'), STYLE.body, { after: 6 })
     return
@@ -276,7 +278,7 @@ async function drawAdditions(sheet: Sheet, words: Words, { method }: LeakRateSum
   const number = (title: string, sub: string, points: number) => ({ title: words.text(title), unit: sub, width: { points }, align: 'right' as const })
   await drawTable(sheet, {
     columns: [
-      { title: words.text('date'), width: { points: 58 }, isRowHeader: true },
+      { title: words.text('date'), width: { points: 61 }, isRowHeader: true },
       { title: words.text('technician'), width: { share: 1 } },
       number('summary.amount', unit, 41), number('summary.counted', unit, 41),
       number(method === 'rolling' ? 'summary.inWindow' : 'summary.forLeak', unit, 44), number('summary.days', words.text('unit.days'), 30),
@@ -322,7 +324,7 @@ class Notes {
 
 async function drawRemovals(sheet: Sheet, words: Words, { removals }: SummaryCircuit): Promise<void> {
   if (removals.length === 0) return
-  sheet.heading(3, words.text('summary.removals'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('summary.removals'), STYLE.subheading, 80)
   const recovered = removals.filter(({ kind }) => kind === 'recovery')
   const unit = words.text(`unit.name.${words.massUnit}`)
   const total: Row[] = recovered.length > 1
@@ -350,7 +352,7 @@ async function drawRemovals(sheet: Sheet, words: Words, { removals }: SummaryCir
 
 async function drawTests(sheet: Sheet, words: Words, { tests }: SummaryCircuit): Promise<void> {
   if (tests.length === 0) return
-  sheet.heading(3, words.text('summary.tests'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('summary.tests'), STYLE.subheading, 70)
   await drawTable(sheet, {
     columns: [
       { title: words.text('date'), width: { points: 70 }, isRowHeader: true },

@@ -1,5 +1,6 @@
-import type { WireThreshold } from '../../shared/api/places'
+import type { WirePackDecision, WireThreshold } from '../../shared/api/places'
 import { percent } from '../../shared/leak-rate/percent'
+import { kg } from '../../shared/mass/mass'
 import { STYLE } from './kit/look'
 import type { Sheet } from './kit/sheet'
 import { drawTable } from './kit/table'
@@ -29,9 +30,9 @@ export async function drawRules(sheet: Sheet, words: Words, thresholds: readonly
       ],
       rows: distinct(thresholds).map((threshold) => ({
         cells: [
-          words.text(`pack.${threshold.packId}`), words.text(`category.${threshold.category}`),
+          words.common(`rules.packs.${threshold.packId}.title`), words.common(`rules.categories.${threshold.category}`),
           words.text('rules.above', { percent: words.percent(percent(threshold.percent)) }),
-          threshold.cite, words.text(`rules.basisOf.${threshold.basis}`), words.date(threshold.checkedOn),
+          threshold.cite, words.common(`rules.basis.${threshold.basis}`), words.date(threshold.checkedOn),
         ],
       })),
     })
@@ -39,6 +40,13 @@ export async function drawRules(sheet: Sheet, words: Words, thresholds: readonly
     sheet.text(words.text('rules.caution'), STYLE.smallStrong, { after: 10 })
   })
 }
+
+/** Which rule packs apply to a circuit, and why or why not. */
+export const decisionsText = (words: Words, packs: readonly WirePackDecision[]): string =>
+  packs.map(({ packId, applies, reasons }) => words.text('rules.decision', {
+    pack: words.common(`rules.packs.${packId}.title`), applies: words.common(`rules.applies.${applies}`),
+    reasons: reasons.map(({ code, params }) => words.common(`rules.reasons.${code}`, params.chargeKg ? { ...params, charge: words.massInBoth(kg(params.chargeKg)) } : params)).join(' '),
+  })).join('\n')
 
 function distinct(thresholds: readonly ThresholdOnPaper[]): ThresholdOnPaper[] {
   const byKey = new Map(thresholds.map((threshold) =>

@@ -1,5 +1,5 @@
 import type { EnteredWeighing, PostingKind } from '../../shared/api/ledger'
-import type { LeakRateMethod } from '../../shared/api/places'
+import type { LeakRateMethod, WirePackDecision } from '../../shared/api/places'
 import type { PlainDate } from '../../shared/dates/plain-date'
 import type { Mass } from '../../shared/mass/mass'
 import { drawFacts, type Fact } from './kit/facts'
@@ -9,7 +9,7 @@ import { Sheet } from './kit/sheet'
 import { drawShape } from './kit/shapes'
 import { drawTable } from './kit/table'
 import { addressOf, footerOf, methodOf, type FullChargeOnPaper, type LeakRateSummary, type Making, type RateOnPaper } from './leak-rate-summary'
-import { drawRules, type ThresholdOnPaper } from './rules-part'
+import { decisionsText, drawRules, type ThresholdOnPaper } from './rules-part'
 import { wordsFor, type Words } from './words'
 
 /** An entry of the ledger on the record: what was weighed, where and by whom. */
@@ -83,6 +83,7 @@ export interface RecordCircuit {
   tests: RecordTest[]
   marks: RecordMark[]
   thresholds: ThresholdOnPaper[]
+  packs: WirePackDecision[]
 }
 
 export interface ServiceRecord {
@@ -149,9 +150,10 @@ async function drawCircuit(sheet: Sheet, words: Words, record: ServiceRecord, ci
     { label: words.text('record.make'), value: words.orMissing([circuit.maker, circuit.model].filter(Boolean).join(' ') || null) },
     { label: words.text('record.serial'), value: words.orMissing(circuit.serial) },
     { label: words.text('refrigerant'), value: circuit.refrigerant, style: STYLE.strong },
-    { label: words.text('rules.category'), value: words.text(`category.${circuit.category}`) },
+    { label: words.text('rules.category'), value: words.common(`rules.categories.${circuit.category}`) },
     { label: words.text('fullCharge'), ...fullChargeOf(words, circuit.fullCharge) },
   ])
+  drawFacts(sheet, [{ label: words.text('rules.decisions'), value: decisionsText(words, circuit.packs), style: STYLE.small }], { columns: 1 })
   sheet.heading(3, words.text('record.entries', { count: circuit.entries.length }), STYLE.subheading)
   if (circuit.entries.length === 0) sheet.text(words.text('record.noEntries'), STYLE.body, { after: 6 })
   for (const entry of circuit.entries) {
@@ -257,7 +259,7 @@ function drawRate(sheet: Sheet, words: Words, record: ServiceRecord, circuit: Re
 }
 
 async function drawLeaks(sheet: Sheet, words: Words, leaks: readonly RecordLeak[]): Promise<void> {
-  sheet.heading(3, words.text('leak.title'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('leak.title'), STYLE.subheading, 70)
   if (leaks.length === 0) return sheet.text(words.text('leak.none'), STYLE.body, { after: 6 })
   await drawTable(sheet, {
     columns: [
@@ -281,7 +283,7 @@ async function drawLeaks(sheet: Sheet, words: Words, leaks: readonly RecordLeak[
 }
 
 async function drawTests(sheet: Sheet, words: Words, tests: readonly RecordTest[]): Promise<void> {
-  sheet.heading(3, words.text('test.title'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('test.title'), STYLE.subheading, 70)
   if (tests.length === 0) return sheet.text(words.text('test.none'), STYLE.body, { after: 6 })
   await drawTable(sheet, {
     columns: [
@@ -306,7 +308,7 @@ const resultOf = (words: Words, test: RecordTest): string =>
   words.text(!test.passed ? 'test.failed' : test.showsAllRepaired ? 'test.passedAll' : 'test.passed')
 
 async function drawMarks(sheet: Sheet, words: Words, marks: readonly RecordMark[]): Promise<void> {
-  sheet.heading(3, words.text('mark.title'), STYLE.subheading, 50)
+  sheet.heading(3, words.text('mark.title'), STYLE.subheading, 70)
   if (marks.length === 0) return sheet.text(words.text('mark.none'), STYLE.body, { after: 6 })
   await drawTable(sheet, {
     columns: [

@@ -12,7 +12,10 @@ const MOST_RATE_DIGITS = 4
 export interface Words {
   locale: string
   massUnit: 'lb' | 'kg'
+  /** A sentence of the area of the papers. */
   text: (key: string, params?: Record<string, unknown>) => string
+  /** A sentence of any area. */
+  common: (key: string, params?: Record<string, unknown>) => string
   /** A number alone, two digits after the point, in the unit of the place. */
   mass: (mass: Mass) => string
   /** "60.00 lb (27.22 kg)" */
@@ -37,11 +40,11 @@ export function wordsFor(locale: string, jurisdiction: string): Words {
   const lb = (mass: Mass): string => text('unit.lb', { mass: number(pounds(mass), 2) })
   const kg = (mass: Mass): string => text('unit.kg', { mass: number(mass, 2) })
   return {
-    locale, massUnit, text,
+    locale, massUnit, text, common: (key, params = {}) => say(locale, key, params),
     mass: (mass) => number(massUnit === 'lb' ? pounds(mass) : mass, 2),
     massInBoth: (mass) => (massUnit === 'lb' ? text('unit.both', { first: lb(mass), second: kg(mass) }) : text('unit.both', { first: kg(mass), second: lb(mass) })),
     massExact: (mass) => exactMass(text, number, mass),
-    percent: (percent, against = null) => percentText(number, percent, against),
+    percent: (percent, against = null) => percentText(text, number, percent, against),
     date: (date) => dates.format(new Date(`${date}T00:00:00Z`)),
     instant: (instant, timeZone) => new Intl.DateTimeFormat(locale, {
       year: 'numeric', month: 'short', day: 'numeric', hour: '2-digit', minute: '2-digit', timeZone, timeZoneName: 'short',
@@ -71,10 +74,13 @@ function exactMass(text: Words['text'], number: Numbers, mass: Mass): string {
     : text('unit.exactKilograms', { pounds: number(pounds, 2, 4), kilograms, exact: toKgText(mass) })
 }
 
-/** Two digits, and more where two would make a rate above a threshold look equal to it. */
-function percentText(number: Numbers, percent: Percent, against: Percent | null): string {
+/** Two digits, and more where two would make a rate look equal to a threshold that it is above or below. */
+function percentText(text: Words['text'], number: Numbers, percent: Percent, against: Percent | null): string {
+  if (against === null) return number(percent, percent.isInteger() ? 0 : 2, 2)
+  const looksEqual = (digits: number): boolean => !percent.equals(against) && percent.toDecimalPlaces(digits, Exact.ROUND_HALF_UP).equals(against)
   let digits = 2
-  if (against && !percent.equals(against))
-    while (digits < MOST_RATE_DIGITS && percent.toDecimalPlaces(digits, Exact.ROUND_HALF_UP).equals(against)) digits += 1
-  return number(percent, against === null && percent.isInteger() ? 0 : 2, digits)
+  while (digits < MOST_RATE_DIGITS && looksEqual(digits)) digits += 1
+  const shown = number(percent, 2, digits)
+  if (!looksEqual(digits)) return shown
+  return text(percent.greaterThan(against) ? 'unit.justAbove' : 'unit.justBelow', { percent: shown })
 }

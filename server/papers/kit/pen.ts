@@ -14,6 +14,7 @@ const MOST_SHAPED = 20_000 // words kept per font and document; beyond it the st
 const FIGURES = ['tnum']
 const NUMBER = /^[\d.,−–%]+$/ // a hyphen of tabular width would tear names such as R-410A apart
 const MISSING = '0000' // the glyph of a sign that the font lacks
+const JOINED = /[\u00a0\u202f]/ // spaces at which no line is broken
 const UNSEEN = /[\u200b-\u200f\u202a-\u202e\u2060-\u2069\ufeff]/g // turn text around or take no room: no place in a record
 // eslint-disable-next-line no-control-regex -- control signs are what is looked for
 const CONTROL = /[\u0000-\u0009\u000b-\u001f\u007f-\u009f]/g
@@ -22,7 +23,7 @@ const CONTROL = /[\u0000-\u0009\u000b-\u001f\u007f-\u009f]/g
 export class Pen {
   private readonly internals: DocumentInternals
   private readonly fonts: Record<Weight, FontInternals>
-  private readonly shaped = new Map<string, Shaped>()
+  private readonly shaped = { regular: new Map<string, Shaped>(), semibold: new Map<string, Shaped>(), figures: { regular: new Map<string, Shaped>(), semibold: new Map<string, Shaped>() } }
 
   constructor(private readonly document: InstanceType<typeof PDFDocument>) {
     this.internals = internalsOf(document)
@@ -56,9 +57,8 @@ export class Pen {
     this.internals.page.fonts[font.id] ??= font.ref()
     const baseline = y + (this.lineHeight(style) - style.size) / 2 + style.size * 0.79 // Inter's letters stand in the middle of the line
     const isWhole = pieces.every((piece) => piece.isWhole)
-    this.document.fillColor(style.colour)
     if (!isWhole) this.document.markContent('Span', { actual: line })
-    this.internals.addContent(`BT /${font.id} ${style.size} Tf 1 0 0 -1 ${round(x)} ${round(baseline)} Tm [${pieces.map((piece) => piece.glyphs).join(' ')}] TJ ET`)
+    this.internals.addContent(`${inkOf(style.colour)} rg BT /${font.id} ${style.size} Tf 1 0 0 -1 ${round(x)} ${round(baseline)} Tm [${pieces.map((piece) => piece.glyphs).join(' ')}] TJ ET`)
     if (!isWhole) this.document.endMarkedContent()
   }
 
@@ -78,7 +78,7 @@ export class Pen {
     let used = 0
     const space = this.shape(' ', style).width * style.size
     for (const word of paragraph.split(' ').filter(Boolean).flatMap((each) => this.fitting(each, style, width))) {
-      const wide = this.width(word, style)
+      const wide = this.wordWidth(word, style)
       if (line && used + space + wide > width) {
         lines.push(line)
         line = word
@@ -93,7 +93,7 @@ export class Pen {
 
   /** A word in pieces that fit a line, parted after a hyphen where it has one. */
   private fitting(word: string, style: TextStyle, width: number): string[] {
-    if (this.width(word, style) <= width) return [word]
+    if (this.wordWidth(word, style) <= width) return [word]
     const parts: string[] = []
     let part = ''
     for (const sign of word) {
@@ -107,16 +107,24 @@ export class Pen {
     return [...parts, part]
   }
 
+  private wordWidth(word: string, style: TextStyle): number {
+    return JOINED.test(word) ? this.width(word, style) : this.shape(word, style).width * style.size
+  }
+
   private pieces(text: string, style: TextStyle): Shaped[] {
     const space = this.shape(' ', style)
-    return text.replace(/[\u00a0\u202f]/g, ' ').split(' ')
-      .flatMap((word, index) => [...(index > 0 ? [space] : []), ...(word ? [this.shape(word, style)] : [])])
+    const pieces: Shaped[] = []
+    text.split(/[ \u00a0\u202f]/).forEach((word, index) => {
+      if (index > 0) pieces.push(space)
+      if (word) pieces.push(this.shape(word, style))
+    })
+    return pieces
   }
 
   private shape(word: string, style: TextStyle): Shaped {
     const isNumber = style.hasTabularFigures === true && NUMBER.test(word)
-    const key = `${style.weight}${isNumber ? '#' : ' '}${word}`
-    const known = this.shaped.get(key)
+    const store = isNumber ? this.shaped.figures[style.weight] : this.shaped[style.weight]
+    const known = store.get(word)
     if (known) return known
     const [codes, positions] = this.fonts[style.weight].encode(word, isNumber ? FIGURES : undefined)
     const glyphs: string[] = []
@@ -126,9 +134,9 @@ export class Pen {
       const kern = position.advanceWidth - position.xAdvance
       glyphs.push(`<${codes[index] ?? MISSING}>${kern === 0 ? '' : ` ${round(kern)}`}`)
     })
-    if (this.shaped.size >= MOST_SHAPED) this.shaped.clear()
+    if (store.size >= MOST_SHAPED) store.clear()
     const shaped = { glyphs: glyphs.join('').replaceAll('><', ''), width, isWhole: !codes.includes(MISSING) }
-    this.shaped.set(key, shaped)
+    store.set(word, shaped)
     return shaped
   }
 }
@@ -136,5 +144,16 @@ export class Pen {
 /** Text as it may stand on paper: no control signs but line breaks. */
 const clean = (text: string): string =>
   text.toWellFormed().replace(/\r\n?|\u2028|\u2029/g, '\n').replace(CONTROL, ' ').replace(UNSEEN, '')
+
+const inks = new Map<string, string>()
+
+/** A colour "#rrggbb" as the operands of rg. */
+export function inkOf(colour: string): string {
+  const known = inks.get(colour)
+  if (known) return known
+  const ink = [1, 3, 5].map((at) => round(Number.parseInt(colour.slice(at, at + 2), 16) / 255)).join(' ')
+  inks.set(colour, ink)
+  return ink
+}
 
 const round = (value: number): string => String(Math.round(value * 1000) / 1000)

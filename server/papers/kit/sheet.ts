@@ -2,7 +2,7 @@ import { setImmediate as nextTurn, setTimeout as pause } from 'node:timers/promi
 import PDFDocument from 'pdfkit'
 import { internalsOf, type PendingObject } from './internals'
 import { COLOUR, MARGIN, STYLE, type PaperSize, type TextStyle } from './look'
-import { Pen } from './pen'
+import { inkOf, Pen } from './pen'
 
 type Document = InstanceType<typeof PDFDocument>
 export type Element = ReturnType<Document['struct']>
@@ -171,7 +171,7 @@ export class Sheet {
     this.labels.forEach((label, index) => {
       const text = this.setup.pageLabel(index + 1, this.labels.length)
       const x = LABEL_WIDTH - this.pen.width(text, STYLE.small)
-      label.end(`BT ${rgb(STYLE.small.colour)} rg /${font.id} ${STYLE.small.size} Tf 1 0 0 1 ${x.toFixed(2)} 3 Tm [${this.pen.glyphs(text, STYLE.small)}] TJ ET`)
+      label.end(`${inkOf(STYLE.small.colour)} rg BT /${font.id} ${STYLE.small.size} Tf 1 0 0 1 ${x.toFixed(2)} 3 Tm [${this.pen.glyphs(text, STYLE.small)}] TJ ET`)
     })
     for (const element of this.parents.splice(0).reverse()) element.end()
     this.document.end()
@@ -215,6 +215,3 @@ export class Sheet {
     this.labels.push(label)
   }
 }
-
-const rgb = (colour: string): string =>
-  [1, 3, 5].map((at) => (Number.parseInt(colour.slice(at, at + 2), 16) / 255).toFixed(3)).join(' ')
