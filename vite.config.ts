@@ -1,22 +1,40 @@
+import { readdirSync } from 'node:fs'
+import { readFile } from 'node:fs/promises'
+import { basename } from 'node:path'
 import vue from '@vitejs/plugin-vue'
+import { transformWithOxc } from 'vite'
+import type { Plugin } from 'vite'
 import { defineConfig } from 'vitest/config'
 
-const SERVER_ENTRIES = {
+/** The server itself and each command of server/cli, built side by side. */
+const serverEntries = (): Record<string, string> => ({
   main: 'server/main.ts',
-  migrate: 'server/cli/migrate.ts',
-  'load-demo': 'server/cli/load-demo.ts',
-  'check-ledger': 'server/cli/check-ledger.ts',
-}
-const API_PORT = Number(process.env.WEIGHBACK_PORT ?? 8080)
+  ...Object.fromEntries(readdirSync('server/cli').map((file) => [`cli/${basename(file, '.ts')}`, `server/cli/${file}`])),
+})
 
-export default defineConfig(({ isSsrBuild }) => ({
-  plugins: [vue()],
+/** Areas of the language file that the pages before the sign-in need; they stay small. */
+const FIRST_AREAS = ['common', 'shell', 'account', 'units']
+const PART = /^(.*\/shared\/language\/[\w-]+\.ts)\?(first|rest)$/
+
+/** What the browser's build leaves out; src/language-compiler.ts reads the messages there. */
+const LEFT_OUT = {
+  __VUE_PROD_DEVTOOLS__: false,
+  __VUE_I18N_LEGACY_API__: false,
+  __VUE_I18N_FULL_INSTALL__: false,
+  __INTLIFY_PROD_DEVTOOLS__: false,
+  __INTLIFY_DROP_MESSAGE_COMPILER__: true,
+}
+
+export default defineConfig(({ command, isSsrBuild }) => ({
+  plugins: [vue(), languageParts()],
+  define: command === 'build' && !isSsrBuild ? LEFT_OUT : {},
+  // Packages stay in node_modules for the server: only our own files are bundled, with their decorators' metadata.
   build: isSsrBuild
-    ? { outDir: '.build/server', target: 'node20', emptyOutDir: true, minify: false, rollupOptions: { input: SERVER_ENTRIES } }
-    : { outDir: '.build/client', target: 'es2022', emptyOutDir: true },
-  server: { proxy: { '/api': { target: `http://127.0.0.1:${API_PORT}`, changeOrigin: false } } },
+    ? { outDir: '.build/server', target: 'node20', copyPublicDir: false, sourcemap: true, rolldownOptions: { input: serverEntries() } }
+    : { outDir: '.build/client', target: 'es2022' },
   test: {
     include: ['tests/**/*.test.ts'],
+    environment: 'node',
     globalSetup: 'tests/support/global-setup.ts',
     testTimeout: 20_000,
     hookTimeout: 60_000,
@@ -24,3 +42,23 @@ export default defineConfig(({ isSsrBuild }) => ({
     maxWorkers: 2,
   },
 }))
+
+/**
+ * Takes a language file apart for the browser: `en.ts?first` has the words before the sign-in, `en.ts?rest`
+ * all others. So a language stays one file for whoever writes it.
+ */
+function languageParts(): Plugin {
+  return {
+    name: 'language-parts',
+    async load(id) {
+      const [, file, part] = PART.exec(id) ?? []
+      if (!file) return null
+      this.addWatchFile(file)
+      const { code } = await transformWithOxc(await readFile(file, 'utf8'), file)
+      const language: Record<string, Record<string, unknown>> = await import(`data:text/javascript,${encodeURIComponent(code)}`)
+      const areas = Object.entries(language[basename(file, '.ts')] ?? {})
+      const words = areas.filter(([area]) => FIRST_AREAS.includes(area) === (part === 'first'))
+      return { code: `export const words = ${JSON.stringify(Object.fromEntries(words))}`, moduleType: 'js' }
+    },
+  }
+}

@@ -1,13 +1,14 @@
 import { createI18n } from 'vue-i18n'
-import type { Language } from '../shared/language/en'
 import { compileMessage } from './language-compiler'
 
-/** One line per language: its file is fetched when it is wanted. */
-const LANGUAGES: Record<string, () => Promise<Language>> = {
-  en: async () => (await import('../shared/language/en')).en,
+/** The words before the sign-in, and all others: the first screen does not wait for the whole language. */
+type Part = 'first' | 'rest'
+
+/** One line per language; vite.config.ts takes its file apart. */
+const LANGUAGES: Record<string, Record<Part, () => Promise<{ words: object }>>> = {
+  en: { first: () => import('../shared/language/en.ts?first'), rest: () => import('../shared/language/en.ts?rest') },
 }
 export const DEFAULT_LOCALE = 'en'
-export const LOCALES = Object.keys(LANGUAGES)
 
 export const i18n = createI18n({
   legacy: false,
@@ -19,19 +20,31 @@ export const i18n = createI18n({
   fallbackWarn: false,
 })
 
+const wanted: Part[] = ['first']
 const loaded = new Set<string>()
 
 /** Fetches a language, English beside it for what it lacks, and shows it. An unknown one becomes English. */
-export async function showLanguage(wanted: string): Promise<void> {
-  const locale = LANGUAGES[wanted] ? wanted : DEFAULT_LOCALE
-  await Promise.all([...new Set([DEFAULT_LOCALE, locale])].map(loadLanguage))
+export async function showLanguage(tag: string): Promise<void> {
+  const locale = LANGUAGES[tag] ? tag : DEFAULT_LOCALE
+  await loadLanguages(locale)
   i18n.global.locale.value = locale
   document.documentElement.lang = locale
 }
 
-async function loadLanguage(locale: string): Promise<void> {
-  const load = LANGUAGES[locale]
-  if (!load || loaded.has(locale)) return
-  i18n.global.setLocaleMessage(locale, await load())
-  loaded.add(locale)
+/** Fetches the words of the pages behind the sign-in. */
+export async function completeLanguage(): Promise<void> {
+  if (!wanted.includes('rest')) wanted.push('rest')
+  await loadLanguages(i18n.global.locale.value)
+}
+
+async function loadLanguages(locale: string): Promise<void> {
+  await Promise.all([...new Set([DEFAULT_LOCALE, locale])].flatMap((each) => wanted.map((part) => loadPart(each, part))))
+}
+
+async function loadPart(locale: string, part: Part): Promise<void> {
+  const language = LANGUAGES[locale]
+  if (!language || loaded.has(`${locale} ${part}`)) return
+  const { words } = await language[part]()
+  i18n.global.mergeLocaleMessage(locale, words)
+  loaded.add(`${locale} ${part}`)
 }

@@ -2,7 +2,7 @@ import { createPinia } from 'pinia'
 import { createApp } from 'vue'
 import App from './App.vue'
 import { applyStoredTheme } from './composables/useTheme'
-import { DEFAULT_LOCALE, i18n, showLanguage } from './language'
+import { DEFAULT_LOCALE, completeLanguage, i18n, showLanguage } from './language'
 import { router } from './router/router'
 import './theme/fonts.css'
 import './theme/tokens.css'
@@ -13,13 +13,13 @@ await showLanguage(DEFAULT_LOCALE)
 
 const app = createApp(App).use(createPinia()).use(i18n)
 
-// PrimeVue comes with the first page behind the sign-in, which it would only delay.
-let isPrimeVueThere = false
+// PrimeVue and the other words come with the first page behind the sign-in, which they would only delay.
+let isHouseFurnished = false
 router.beforeResolve(async (to) => {
-  if (to.meta.isOpen || isPrimeVueThere) return
-  const { installPrimeVue } = await import('./theme/install-primevue')
-  if (!isPrimeVueThere) installPrimeVue(app)
-  isPrimeVueThere = true
+  if (to.meta.isOpen || isHouseFurnished) return
+  const [{ installPrimeVue }] = await Promise.all([import('./theme/install-primevue'), completeLanguage()])
+  if (!isHouseFurnished) installPrimeVue(app)
+  isHouseFurnished = true
 })
 
 app.use(router).mount('#app')
