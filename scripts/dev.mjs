@@ -1,44 +1,74 @@
-import { spawn } from 'node:child_process'
+// npm run dev: the page from sources, the server built anew at each change, on the same data as npm start.
+import { existsSync } from 'node:fs'
 import { join } from 'node:path'
-import { openCluster } from './database/cluster.mjs'
-import { ensureRoles } from './database/roles.mjs'
-import { ensurePostgres } from './support/debian.mjs'
+import { startCluster } from './database/cluster.mjs'
+import { ensurePostgresql } from './database/postgresql.mjs'
+import { demoAccounts } from './support/demo-accounts.mjs'
+import { runScript } from './support/ending.mjs'
 import { startMailFake } from './support/mail-fake.mjs'
+import { beTheOnlyOne } from './support/only-one.mjs'
 import { ensurePackages } from './support/packages.mjs'
-import { runCommand } from './support/processes.mjs'
-import { BUILD, DATA, readSettings, ROOT, writeSettings } from './support/project.mjs'
-import { Advice, run, say } from './support/say.mjs'
+import { anyFreePort, chosenPort } from './support/ports.mjs'
+import { dataFolder, inProject, projectFolder } from './support/project.mjs'
+import { say, sentenceOf } from './support/say.mjs'
+import { runServerCommand, serverEnvironment, startServer } from './support/server.mjs'
 
-/** The application while it is being written: client and server built on every change, one address. */
-async function main() {
+const API = ['/api', '/health', '/ready']
+
+await runScript(async (atEnd) => {
+  beTheOnlyOne(atEnd)
+  const host = process.env.WEIGHBACK_HOST ?? '127.0.0.1'
+  const port = await chosenPort('WEIGHBACK_PORT', 8080, host)
   await ensurePackages()
-  await ensurePostgres()
-  const settings = readSettings()
-  const cluster = await openCluster({ superuserPassword: settings.superuserPassword, wantedPort: settings.databasePort })
-  writeSettings({ ...settings, databasePort: cluster.port })
-  const { ownerUrl, appUrl } = await ensureRoles(cluster.url, settings)
-  const mailDir = join(DATA, 'mail')
-  const mail = await startMailFake(mailDir)
-  const port = Number(process.env.WEIGHBACK_PORT ?? 8080)
-  const clientPort = port + 1
-  const env = {
-    ...process.env, WEIGHBACK_MODE: 'development', WEIGHBACK_PORT: String(port), WEIGHBACK_BASE_URL: `http://127.0.0.1:${clientPort}`,
-    WEIGHBACK_SECRET: settings.secret, WEIGHBACK_DATABASE_URL: appUrl, WEIGHBACK_OWNER_DATABASE_URL: ownerUrl,
-    WEIGHBACK_MAIL_URL: `smtp://127.0.0.1:${mail.port}?ignoreTLS=true`, WEIGHBACK_MAIL_DIR: mailDir,
+  await ensurePostgresql()
+  const databases = await startCluster(atEnd)
+  const mailFolder = join(dataFolder, 'mail')
+  const mailUrl = await startMailFake({ folder: mailFolder, atEnd })
+  const apiPort = await anyFreePort()
+  const baseUrl = `http://${host}:${port}`
+  const env = serverEnvironment({ mode: 'development', host: '127.0.0.1', port: apiPort, baseUrl, databases, mailUrl, mailFolder })
+
+  await watchServer({ folder: inProject('.build/dev/server'), env, atEnd })
+  await servePage({ host, port, apiPort, atEnd })
+  say(`\nWeighback, watching, is at ${baseUrl}\n\nDemo accounts:\n${demoAccounts()}\n`)
+  await new Promise(() => {}) // until Ctrl-C
+}, { interruptedCode: 0 })
+
+/** Builds the server at each change and starts it anew; a fault in the sources leaves the watch running. */
+async function watchServer({ folder, env, atEnd }) {
+  const { build } = await import('vite')
+  let server = null
+  const startAgain = async () => {
+    await server?.stop()
+    server = null
+    await runServerCommand({ folder, command: 'migrate', env })
+    if (existsSync(join(folder, 'cli/load-demo.js'))) await runServerCommand({ folder, command: 'load-demo', env })
+    server = await startServer({ folder, env })
+    server.ended.catch((error) => say(`${sentenceOf(error)}\nIt starts again after the next change.`))
+    say('The server is up.')
   }
-  const vite = join(ROOT, 'node_modules', '.bin', 'vite')
-  if ((await runCommand(vite, ['build', '--ssr', '--logLevel', 'warn'], { cwd: ROOT, env })).code !== 0) throw new Advice('The server does not build; the lines above say where.')
-  for (const step of ['migrate', 'load-demo']) await runCommand(process.execPath, [join(BUILD, 'server', `${step}.js`)], { cwd: ROOT, env })
-  const children = [
-    spawn(vite, ['build', '--ssr', '--watch', '--logLevel', 'warn'], { cwd: ROOT, env, stdio: 'inherit' }),
-    spawn(process.execPath, ['--watch', join(BUILD, 'server', 'main.js')], { cwd: ROOT, env, stdio: 'inherit' }),
-    spawn(vite, ['--port', String(clientPort), '--strictPort', '--host', '127.0.0.1'], { cwd: ROOT, env, stdio: 'inherit' }),
-  ]
-  say(`\nWeighback in development: http://127.0.0.1:${clientPort}`)
-  await new Promise((resolve) => { for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, resolve) })
-  for (const child of children) child.kill('SIGTERM')
-  await mail.stop()
-  await cluster.stop()
+  let turn = Promise.resolve() // one start after the other
+  const watcher = await build({
+    root: projectFolder, logLevel: 'warn', mode: 'development',
+    build: { ssr: true, outDir: folder, emptyOutDir: true, watch: {} },
+  })
+  atEnd(async () => {
+    await watcher.close()
+    await turn
+    await server?.stop()
+  })
+  watcher.on('event', (event) => {
+    if (event.code === 'BUNDLE_END') void event.result?.close()
+    if (event.code === 'END') turn = turn.then(startAgain).catch((error) => say(sentenceOf(error)))
+    if (event.code === 'ERROR') say(`The server cannot be built: ${event.error.message}`)
+  })
 }
 
-run(main)
+/** Vite's own server for the page, handing everything of the API on. */
+async function servePage({ host, port, apiPort, atEnd }) {
+  const { createServer } = await import('vite')
+  const proxy = Object.fromEntries(API.map((path) => [path, { target: `http://127.0.0.1:${apiPort}` }]))
+  const page = await createServer({ root: projectFolder, server: { host, port, strictPort: true, proxy } })
+  atEnd(() => page.close())
+  await page.listen()
+}

@@ -1,69 +1,82 @@
+// npm test: every check. `npm test -- tests/unit` runs only the tests under that path, without what they do not need.
 import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
-import { openThrowAwayCluster } from './database/cluster.mjs'
+import { ensurePostgresql } from './database/postgresql.mjs'
+import { startThrowAway } from './database/throw-away.mjs'
 import { ensureBuild } from './support/build.mjs'
-import { ensureChromium, ensurePoppler, ensurePostgres } from './support/debian.mjs'
+import { isOnPath, show } from './support/commands.mjs'
+import { ensureDebianPackages } from './support/debian.mjs'
+import { runScript } from './support/ending.mjs'
 import { ensurePackages } from './support/packages.mjs'
-import { runCommand } from './support/processes.mjs'
-import { BUILD, randomSecret, ROOT } from './support/project.mjs'
-import { run, say } from './support/say.mjs'
+import { inProject } from './support/project.mjs'
+import { say, sentenceOf } from './support/say.mjs'
+import { countTests } from './support/test-count.mjs'
 
-const RESULTS = join(BUILD, 'test-results.json')
+const CHROMIUM = '/usr/bin/chromium'
+const INTERRUPTED = 130 // what a shell says after Ctrl-C
 
-/**
- * Type check, lint, build and every test, on a throw-away PostgreSQL. Arguments are passed on to vitest:
- * `npm test -- tests/unit` runs those alone. The last line counts.
- */
-async function main() {
-  const only = process.argv.slice(2)
-  await ensurePackages()
-  await ensurePostgres()
-  await ensureChromium()
-  await ensurePoppler()
-  const stages = []
-  const bin = (name) => join(ROOT, 'node_modules', '.bin', name)
+const filters = process.argv.slice(2)
+const paths = filters.filter((filter) => !filter.startsWith('-'))
+const isWhole = paths.length === 0
+const needs = (...folders) => isWhole || paths.some((path) => folders.some((folder) => path.includes(folder)))
+const needsDatabase = isWhole || !paths.every((path) => /^tests\/(unit|published|house)\b/.test(path))
+
+const folder = inProject('.build/test')
+
+await runScript(async (atEnd) => {
+  let failed = 0
   const stage = async (name, work) => {
-    say(`\n— ${name}`)
-    const isGood = await work().then((code) => code === 0, (error) => {
-      console.error(error.message)
+    say(`\n== ${name}`)
+    try {
+      if ((await work()) === false) throw new Error(`${name}: failed.`)
+      return true
+    } catch (error) {
+      say(error.message === `${name}: failed.` ? error.message : sentenceOf(error))
+      failed++
       return false
-    })
-    stages.push({ name, isGood })
+    }
   }
-  if (only.length === 0) {
-    await stage('type check', async () => (await runCommand(bin('vue-tsc'), ['--noEmit'], { cwd: ROOT })).code)
-    await stage('lint', async () => (await runCommand(bin('eslint'), ['.'], { cwd: ROOT })).code)
-  }
-  if (only.length === 0 || only.some((path) => path.includes('e2e'))) await stage('build', async () => {
-    await ensureBuild()
-    return 0
+  const tool = async (file, ...args) => (await show(process.execPath, [inProject('node_modules', file), ...args])) === 0
+
+  let tests = { passed: 0, failed: 0 }
+  const isSetUp = await stage('Packages', async () => {
+    await ensurePackages()
+    if (needsDatabase) await ensurePostgresql()
+    await ensureDebianPackages([
+      ...(needs('e2e') ? [{ name: 'chromium', isPresent: () => existsSync(CHROMIUM) }] : []),
+      ...(needsDatabase ? [{ name: 'poppler-utils', isPresent: () => isOnPath('pdftotext') }] : []),
+    ])
   })
-  const counts = await runTests(bin('vitest'), only)
-  const passed = counts.passed + stages.filter(({ isGood }) => isGood).length
-  const failed = counts.failed + stages.filter(({ isGood }) => !isGood).length
-  for (const { name, isGood } of stages) if (!isGood) say(`failed: ${name}`)
-  say(`\n${passed} passed, ${failed} failed`)
-  process.exitCode = failed > 0 || counts.passed === 0 ? 1 : 0
-}
-
-async function runTests(vitest, only) {
-  say('\n— tests')
-  mkdirSync(BUILD, { recursive: true })
-  rmSync(RESULTS, { force: true })
-  const cluster = await openThrowAwayCluster(randomSecret())
-  const interrupt = () => { void cluster.stop().then(() => process.exit(130)) }
-  for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, interrupt)
-  try {
-    const { code } = await runCommand(vitest, ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${RESULTS}`, ...only],
-      { cwd: ROOT, env: { ...process.env, WEIGHBACK_TEST_ADMIN_URL: cluster.url, WEIGHBACK_MODE: 'test' } })
-    if (!existsSync(RESULTS)) return { passed: 0, failed: 1 }
-    const { numPassedTests: passed, numFailedTests, numFailedTestSuites } = JSON.parse(readFileSync(RESULTS, 'utf8'))
-    // a file that does not load has no failed test of its own, and an error outside of tests shows only in the exit code
-    const failed = Math.max(numFailedTests, numFailedTestSuites > 0 && numFailedTests === 0 ? numFailedTestSuites : 0, code !== 0 ? 1 : 0)
-    return { passed, failed }
-  } finally {
-    await cluster.stop()
+  if (isSetUp) {
+    if (isWhole) {
+      await stage('Types', () => tool('vue-tsc/bin/vue-tsc.js', '--noEmit'))
+      await stage('Lint', () => tool('eslint/bin/eslint.js', '.', '--max-warnings', '0'))
+    }
+    if (needs('e2e', 'api')) await stage('Build', () => ensureBuild(folder))
+    let adminUrl = ''
+    const hasDatabase = !needsDatabase || (await stage('Database', async () => { adminUrl = await startThrowAway(atEnd) }))
+    if (hasDatabase) {
+      say('\n== Tests')
+      tests = await runTests(adminUrl)
+    }
   }
-}
+  const all = { passed: tests.passed, failed: failed + tests.failed }
+  if (all.passed + all.failed === 0) say('No test was found.')
+  say(`\n${all.passed} passed, ${all.failed} failed`)
+  return all.failed > 0 || all.passed === 0 ? 1 : 0
+}, { interruptedCode: INTERRUPTED })
 
-run(main)
+async function runTests(adminUrl) {
+  const report = join(folder, 'report.json')
+  mkdirSync(folder, { recursive: true })
+  rmSync(report, { force: true })
+  const env = {
+    ...process.env,
+    ...(adminUrl ? { WEIGHBACK_TEST_ADMIN_URL: adminUrl } : {}),
+    WEIGHBACK_TEST_BUILD: folder,
+    WEIGHBACK_TEST_CHROMIUM: CHROMIUM,
+  }
+  const args = [inProject('node_modules/vitest/vitest.mjs'), 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`, ...filters]
+  const code = await show(process.execPath, args, { env })
+  return countTests({ code, report: existsSync(report) ? JSON.parse(readFileSync(report, 'utf8')) : null })
+}

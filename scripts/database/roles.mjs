@@ -1,24 +1,23 @@
+import { runSql } from './postgresql.mjs'
+
 /**
- * Makes the two roles and the database where they are missing: the owner, who migrates, and the application,
- * which neither owns a table nor bypasses row security.
- *
- * @param admin  superuser address
- * @returns the addresses of both roles in the database
+ * Makes the database and its two roles where they are missing, and sets their passwords. The owner has the
+ * tables and migrates; the application signs in as a role that owns nothing, so row security binds it.
  */
-export async function ensureRoles(admin, { ownerPassword, appPassword, database = 'weighback' }) {
-  const { default: pg } = await import('pg')
-  const client = new pg.Client({ connectionString: admin })
-  await client.connect()
-  try {
-    for (const [role, password] of [['weighback_owner', ownerPassword], ['weighback_app', appPassword]]) {
-      const { rowCount } = await client.query('select from pg_roles where rolname = $1', [role])
-      await client.query(`${rowCount ? 'alter' : 'create'} role ${role} login nosuperuser nobypassrls nocreatedb nocreaterole password ${client.escapeLiteral(password)}`)
-    }
-    const { rowCount } = await client.query('select from pg_database where datname = $1', [database])
-    if (!rowCount) await client.query(`create database ${database} owner weighback_owner`)
-  } finally {
-    await client.end()
-  }
-  const at = (user, password) => Object.assign(new URL(admin), { username: user, password, pathname: `/${database}` }).href
-  return { ownerUrl: at('weighback_owner', ownerPassword), appUrl: at('weighback_app', appPassword) }
+export async function ensureRoles({ programs, port, settings }) {
+  const password = settings.superuserPassword
+  await runSql({
+    programs, port, password,
+    sql: `
+      ${ensureRole('weighback_owner', settings.ownerPassword)}
+      ${ensureRole('weighback_app', settings.appPassword)}
+      select 'create database weighback owner weighback_owner' where not exists (select from pg_database where datname = 'weighback') \\gexec
+      revoke all on database weighback from public;
+      grant connect on database weighback to weighback_app;
+    `,
+  })
 }
+
+const ensureRole = (name, password) => `
+      select 'create role ${name}' where not exists (select from pg_roles where rolname = '${name}') \\gexec
+      alter role ${name} login nosuperuser nocreatedb nocreaterole noreplication nobypassrls password '${password}';`

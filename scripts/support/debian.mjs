@@ -1,29 +1,34 @@
-import { existsSync } from 'node:fs'
-import { runCommand } from './processes.mjs'
-import { Advice, say } from './say.mjs'
+import { capture, isOnPath, isRoot, show } from './commands.mjs'
+import { Stop, say } from './say.mjs'
 
 /**
- * Installs Debian packages where a file that they bring is missing: as root directly, else by sudo without
- * a password, else it says the one command to run.
+ * Installs those Debian packages whose `isPresent` says no: as root, else by sudo where it asks for no password.
+ * @throws Stop with the one command to run where neither is possible
  */
-export async function ensureDebian(packages, proof) {
-  if (existsSync(proof)) return
-  const command = `apt-get update && apt-get install -y ${packages.join(' ')}`
-  const advice = new Advice(`Debian's ${packages.join(', ')} is missing. Install it, then start again:\n\n  sudo sh -c '${command}'\n`)
-  const isRoot = process.getuid?.() === 0
-  if (!existsSync('/usr/bin/apt-get')) throw advice
-  if (!isRoot && (await runCommand('sudo', ['-n', 'true'], { isQuiet: true }).catch(() => ({ code: 1 }))).code !== 0) throw advice
-  say(`Installing Debian's ${packages.join(', ')} …`)
-  const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' }
-  const { code, output } = isRoot
-    ? await runCommand('sh', ['-c', command], { env, isQuiet: true })
-    : await runCommand('sudo', ['-n', 'env', 'DEBIAN_FRONTEND=noninteractive', 'sh', '-c', command], { env, isQuiet: true })
-  if (code !== 0 || !existsSync(proof)) {
-    const reason = output.trim().split('\n').slice(-5).join('\n')
-    throw new Advice(`Debian's ${packages.join(', ')} could not be installed:\n${reason}\n\nMend that and start again, or run by hand:\n\n  ${command}\n`)
+export async function ensureDebianPackages(wanted) {
+  const missing = wanted.filter(({ isPresent }) => !isPresent()).map(({ name }) => name)
+  if (missing.length === 0) return
+  const names = missing.join(' ')
+  if (!isOnPath('apt-get'))
+    throw new Stop(`Weighback needs ${names}, and this machine has no apt-get: install what corresponds to Debian's packages of these names.`)
+  const asRoot = isRoot ? [] : await sudo(names)
+  say(`Installing Debian's ${names} …`)
+  const apt = (...args) => {
+    const [program, ...rest] = [...asRoot, 'env', 'DEBIAN_FRONTEND=noninteractive', 'apt-get', ...args]
+    return show(program, rest, { isUntouched: true })
   }
+  const isDone = (await apt('update', '-q')) === 0 && (await apt('install', '-q', '-y', '--no-install-recommends', ...missing)) === 0
+  const still = wanted.filter(({ isPresent }) => !isPresent()).map(({ name }) => name)
+  if (!isDone || still.length > 0)
+    throw new Stop(`Debian's ${still.join(' ') || names} could not be installed; apt-get says why above. Then start again.`)
 }
 
-export const ensurePostgres = () => ensureDebian(['postgresql'], '/usr/lib/postgresql/15/bin/initdb')
-export const ensureChromium = () => ensureDebian(['chromium'], '/usr/bin/chromium')
-export const ensurePoppler = () => ensureDebian(['poppler-utils'], '/usr/bin/pdftotext')
+async function sudo(names) {
+  if (isOnPath('sudo') && (await capture('sudo', ['-n', 'true'])).code === 0) return ['sudo', '-n']
+  const command = `apt-get update && apt-get install -y ${names}`
+  throw new Stop(
+    isOnPath('sudo')
+      ? `Weighback needs Debian's ${names}. Run this once, then start again:\n\n  sudo sh -c '${command}'\n`
+      : `Weighback needs Debian's ${names}. Run this once as root, then start again:\n\n  ${command}\n`,
+  )
+}

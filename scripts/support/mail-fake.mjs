@@ -1,63 +1,50 @@
-import { mkdirSync, writeFileSync } from 'node:fs'
+import { mkdirSync, readdirSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
+import { readLetter } from './letter.mjs'
+
+const MOST_LETTERS = 200 // older ones are removed
 
 /**
- * A mail server on loopback for development: takes every letter, keeps it as .eml and as .json that the
- * application shows at /mail, and delivers nothing.
+ * Starts a mail server on loopback that sends nothing on: each letter is kept in a folder, as it came (.eml)
+ * and as JSON for the page that shows it.
+ * @returns the address for WEIGHBACK_MAIL_URL
  */
-export async function startMailFake(folder, port = 0) {
-  const { SMTPServer } = await import('smtp-server')
+export async function startMailFake({ folder, atEnd }) {
+  const { SMTPServer } = await import('smtp-server') // only there once the packages are installed
   mkdirSync(folder, { recursive: true, mode: 0o700 })
   let count = 0
   const server = new SMTPServer({
-    authOptional: true, disabledCommands: ['AUTH', 'STARTTLS'], logger: false, size: 20_000_000,
+    authOptional: true,
+    disabledCommands: ['STARTTLS', 'AUTH'],
+    logger: false,
     onData: (stream, session, done) => {
       const parts = []
       stream.on('data', (part) => parts.push(part))
       stream.on('end', () => {
-        const raw = Buffer.concat(parts)
-        const name = `${new Date().toISOString().replaceAll(/[:.]/g, '-')}-${String(++count).padStart(4, '0')}`
-        writeFileSync(join(folder, `${name}.eml`), raw)
-        writeFileSync(join(folder, `${name}.json`), JSON.stringify(letterOf(name, raw.toString('utf8'), session.envelope)))
-        done()
+        try {
+          keep(folder, ++count, Buffer.concat(parts), session)
+          done()
+        } catch (error) {
+          done(error) // the sender learns it, as from any mail server
+        }
       })
     },
   })
+  server.on('error', () => {}) // a broken connection; the sender has it as well
   await new Promise((resolve, reject) => {
-    server.on('error', reject)
-    server.listen(port, '127.0.0.1', resolve)
+    server.server.once('error', reject)
+    server.listen(0, '127.0.0.1', resolve)
   })
-  return { port: server.server.address().port, stop: () => new Promise((resolve) => server.close(resolve)) }
+  atEnd(() => new Promise((resolve) => server.close(() => resolve())))
+  return `smtp://127.0.0.1:${server.server.address().port}?ignoreTLS=true`
 }
 
-function letterOf(id, raw, envelope) {
-  const [head, ...rest] = raw.split(/\r?\n\r?\n/)
-  const headers = Object.fromEntries(head.replace(/\r?\n[ \t]+/g, ' ').split(/\r?\n/).map((line) => {
-    const colon = line.indexOf(':')
-    return [line.slice(0, colon).toLowerCase(), line.slice(colon + 1).trim()]
-  }))
-  const boundary = /boundary="?([^";]+)"?/.exec(headers['content-type'] ?? '')?.[1]
-  const body = rest.join('\n\n')
-  const parts = boundary ? body.split(`--${boundary}`) : [`\n\n${body}`]
-  const plain = parts.find((part) => /text\/plain/i.test(part)) ?? parts.at(0) ?? ''
-  return {
-    id, at: new Date().toISOString(), from: headers.from ?? '', to: envelope.rcptTo.map(({ address }) => address),
-    subject: decodeWords(headers.subject ?? ''), text: decodeBody(plain),
-  }
+function keep(folder, count, raw, session) {
+  const receivedAt = new Date().toISOString()
+  const id = `${receivedAt.replace(/[-:.]/g, '')}-${String(count).padStart(4, '0')}`
+  const recipients = session.envelope.rcptTo.map(({ address }) => address)
+  writeFileSync(join(folder, `${id}.eml`), raw)
+  writeFileSync(join(folder, `${id}.json`), JSON.stringify({ id, sentAt: receivedAt, to: recipients.join(', '), ...readLetter(raw) }, null, 2))
+  const ids = readdirSync(folder).filter((name) => name.endsWith('.json')).map((name) => name.slice(0, -'.json'.length)).sort()
+  for (const old of ids.slice(0, -MOST_LETTERS)) for (const ending of ['eml', 'json']) rmSync(join(folder, `${old}.${ending}`), { force: true })
 }
-
-/** RFC 2047 words in a header. */
-const decodeWords = (text) => text.replace(/=\?utf-8\?([bq])\?([^?]*)\?=\s*/gi, (_all, kind, word) =>
-  kind.toLowerCase() === 'b' ? Buffer.from(word, 'base64').toString('utf8') : fromQuotedPrintable(word.replaceAll('_', ' ')))
-
-function decodeBody(part) {
-  const [head = '', ...rest] = part.trimStart().split(/\r?\n\r?\n/)
-  const hasHead = /^content-/im.test(head)
-  const body = hasHead ? rest.join('\n\n') : part
-  if (/quoted-printable/i.test(head)) return fromQuotedPrintable(body.replace(/=\r?\n/g, '')).trim()
-  if (/base64/i.test(head)) return Buffer.from(body, 'base64').toString('utf8').trim()
-  return body.trim()
-}
-
-const fromQuotedPrintable = (text) =>
-  Buffer.from(text.replace(/=([0-9A-F]{2})/gi, (_all, hex) => String.fromCharCode(Number.parseInt(hex, 16))), 'latin1').toString('utf8')

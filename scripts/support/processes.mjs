@@ -1,35 +1,22 @@
-import { spawn } from 'node:child_process'
-import { createServer } from 'node:net'
+import { readFileSync } from 'node:fs'
 
-/** Runs a command to its end. @returns its exit code and what it printed (nothing where it prints to our own output) */
-export function runCommand(command, args, { cwd, env, isQuiet = false } = {}) {
-  return new Promise((resolve, reject) => {
-    const child = spawn(command, args, { cwd, env, stdio: isQuiet ? ['ignore', 'pipe', 'pipe'] : ['ignore', 'inherit', 'inherit'] })
-    let output = ''
-    child.stdout?.on('data', (text) => { output += text })
-    child.stderr?.on('data', (text) => { output += text })
-    child.on('error', reject)
-    child.on('close', (code) => resolve({ code: code ?? 1, output }))
-  })
+const START_FIELD = 19 // of /proc/<pid>/stat, counted from 0 behind the name in brackets: when the process began
+
+/** When a process began, in ticks since the machine did; null if it runs no more. */
+function beginning(pid) {
+  try {
+    const stat = readFileSync(`/proc/${pid}/stat`, 'utf8')
+    return stat.slice(stat.lastIndexOf(')') + 2).split(' ')[START_FIELD] ?? null
+  } catch {
+    return null
+  }
 }
 
-/** Whether a port of loopback is free. */
-export function isFree(port) {
-  return new Promise((resolve) => {
-    const probe = createServer()
-    probe.once('error', () => resolve(false))
-    probe.listen(port, '127.0.0.1', () => probe.close(() => resolve(true)))
-  })
-}
+/** Names this process so that a later one with the same number is not taken for it. */
+export const thisProcess = () => `${process.pid} ${beginning(process.pid)}`
 
-/** A free port of loopback, chosen by the system. */
-export function freePort() {
-  return new Promise((resolve, reject) => {
-    const probe = createServer()
-    probe.once('error', reject)
-    probe.listen(0, '127.0.0.1', () => {
-      const { port } = probe.address()
-      probe.close(() => resolve(port))
-    })
-  })
+/** Whether the process that `thisProcess` named still runs. */
+export function isSameProcess(name) {
+  const [pid, began] = name.split(' ')
+  return beginning(pid) === began
 }

@@ -1,0 +1,43 @@
+import { chownSync, mkdirSync, readFileSync, statfsSync, writeFileSync } from 'node:fs'
+import { execFileSync } from 'node:child_process'
+import { databaseUser } from './postgresql.mjs'
+
+let ids = null
+
+function databaseUserIds() {
+  ids ??= ['-u', '-g'].map((option) => Number(execFileSync('id', [option, databaseUser], { encoding: 'utf8' })))
+  return ids
+}
+
+/** Gives a file or folder to the user that PostgreSQL runs as. */
+export function giveToDatabase(path) {
+  if (databaseUser) chownSync(path, ...databaseUserIds())
+}
+
+/** Makes a folder that only PostgreSQL's user may enter. */
+export function makeDatabaseFolder(path) {
+  mkdirSync(path, { recursive: true, mode: 0o700 })
+  giveToDatabase(path)
+}
+
+/** Writes a file that only PostgreSQL's user may read. */
+export function writeForDatabase(path, text) {
+  writeFileSync(path, text, { mode: 0o600 })
+  giveToDatabase(path)
+}
+
+const MEGABYTE = 1_048_576
+
+export function freeMegabytes(folder) {
+  const { bavail, bsize } = statfsSync(folder)
+  return Math.floor((bavail * bsize) / MEGABYTE)
+}
+
+/** The last lines of a log, indented for quoting. */
+export function lastLines(file, count = 8) {
+  try {
+    return readFileSync(file, 'utf8').trimEnd().split('\n').slice(-count).map((line) => `  ${line}`).join('\n')
+  } catch {
+    return ''
+  }
+}
