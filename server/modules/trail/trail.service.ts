@@ -27,3 +27,9 @@ export function difference(before: object, after: object): { before: Record<stri
   if (changed.length === 0) return null
   return { before: Object.fromEntries(changed.map(([key]) => [key, old[key] ?? null])), after: Object.fromEntries(changed) }
 }
+
+/** Notes a change with only what differs; nothing where nothing does. */
+export async function recordChange(tx: Tx, who: Pick<Actor, 'companyId' | 'personId'>, note: Omit<TrailNote, 'before' | 'after'>, before: object, after: object): Promise<void> {
+  const changed = difference(before, after)
+  if (changed) await record(tx, who, { ...note, ...changed })
+}

@@ -1,0 +1,29 @@
+import type { VisitDraft, WireVisit } from '../../../shared/api/places'
+import type { Actor } from '../../actor'
+import type { Tx } from '../../database'
+import { badField, notFound } from '../../problem'
+import { insertRow } from '../../versioned'
+import { getSite } from '../sites/sites.service'
+import * as trail from '../trail/trail.service'
+import { visitById } from './visits.repository'
+
+export { listVisits } from './visits.repository'
+
+/** @throws Problem not-found */
+export async function getVisit(tx: Tx, who: Actor, id: string): Promise<WireVisit> {
+  const visit = await visitById(tx, who, id)
+  if (!visit) throw notFound('visit')
+  return visit
+}
+
+/** A visit has the id that the device made; the same id again changes nothing. @throws Problem bad-input where the site is not ours */
+export async function createVisit(tx: Tx, who: Actor, draft: VisitDraft): Promise<WireVisit> {
+  const known = await visitById(tx, who, draft.id)
+  if (known) return known
+  const site = await getSite(tx, who, draft.siteId).catch(() => { throw badField('siteId', 'unknownSite') })
+  await insertRow(tx, 'visit', {
+    company_id: who.companyId, id: draft.id, customer_id: site.customerId, site_id: site.id, person_id: who.personId, visited_on: draft.visitedOn, remark: draft.remark,
+  })
+  await trail.record(tx, who, { action: 'create', subject: 'visit', subjectId: draft.id, subjectName: site.name, after: draft })
+  return getVisit(tx, who, draft.id)
+}
