@@ -35,7 +35,12 @@ export const PARTNER_KINDS = ['supplier', 'reclaimer', 'destroyer'] as const
 export interface PartnerDraft { name: string; kind: (typeof PARTNER_KINDS)[number]; address: string | null; certificate: string | null }
 export interface WirePartner extends PartnerDraft { id: string; version: number; may: string[] }
 
-/** One row of the yearly cylinder ledger [kg]; opening + in = out + closing. */
+/**
+ * One row of the yearly cylinder ledger [kg]. Exactly:
+ * opening + bought + recovered + received + transferred in + taken up + variance
+ * = charged + returned + reclaimed + destroyed + transferred out + closing.
+ * A reversal counts, with the opposite sign, in the column of what it takes back and in the year of its own date.
+ */
 export interface YearlyCylinderRow {
   refrigerant: string
   cylinderNumber: string
@@ -43,10 +48,16 @@ export interface YearlyCylinderRow {
   boughtKg: string
   recoveredKg: string
   receivedKg: string
+  /** From other cylinders of the company. */
+  transferredInKg: string
+  /** Opening stock that was entered within the year, when the book of a cylinder was begun. */
+  takenUpKg: string
   chargedKg: string
   returnedKg: string
   reclaimedKg: string
   destroyedKg: string
+  transferredOutKg: string
+  /** Scale minus book: positive where more was found than the book said, negative where it was lost. */
   varianceKg: string
   closingKg: string
 }
