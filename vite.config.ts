@@ -30,8 +30,8 @@ export default defineConfig(({ command, isSsrBuild }) => ({
   define: command === 'build' && !isSsrBuild ? LEFT_OUT : {},
   // Packages stay in node_modules for the server: only our own files are bundled, with their decorators' metadata.
   build: isSsrBuild
-    ? { outDir: '.build/server', target: 'node20', copyPublicDir: false, sourcemap: true, rolldownOptions: { input: serverEntries() } }
-    : { outDir: '.build/client', target: 'es2022' },
+    ? { outDir: '.build/server', target: 'node20', copyPublicDir: false, sourcemap: true, rolldownOptions: { input: serverEntries(), checks: { bundlerTimings: false } } }
+    : { outDir: '.build/client', target: 'es2022', rolldownOptions: { checks: { bundlerTimings: false } } },
   test: {
     include: ['tests/**/*.test.ts'],
     environment: 'node',
