@@ -3,6 +3,7 @@ import { localDateOf, plainDate, type PlainDate } from '../../../shared/dates/pl
 import { historyFromWire } from '../../../shared/leak-rate/from-wire'
 import { fullChargeOn } from '../../../shared/leak-rate/history'
 import { roomOn } from '../../../shared/leak-rate/look-ahead'
+import { isNear } from '../../../shared/leak-rate/near'
 import { isAbove, toPercentText, toTenThousandths, type Percent } from '../../../shared/leak-rate/percent'
 import { rateAdditions, type RatedAddition } from '../../../shared/leak-rate/rated-additions'
 import { isPositive, kg, toKgText } from '../../../shared/mass/mass'
@@ -13,8 +14,6 @@ import * as repository from './history.repository'
 import { type CircuitRecord } from './history.repository'
 
 const RATE_DIGITS = 12 // as `numeric(30, 12)` keeps them; comparisons are made before rounding
-/** [% of the threshold] from which a circuit counts as near. Our own figure: a warning, not a rule of law. */
-export const NEAR_SHARE = 70
 const FLAT_SEVERITY = 900_000_000
 const OVER_SEVERITY = 1_000_000_000
 const MOST_SHARE = 99_999_999 // [1/10,000 of the threshold] beyond it every circuit is equally bad
@@ -71,7 +70,7 @@ function standingOf(record: CircuitRecord, rated: readonly RatedAddition[]): rep
   const isFlat = record.status === 'in-service' && record.full_charges.length > 0 && !isPositive(kg(record.book_kg))
   const standing: Standing = rate && threshold && isAbove(rate, threshold) ? 'over'
     : isFlat ? 'flat'
-      : rate && threshold ? (rate.times(100).dividedBy(threshold).lessThan(NEAR_SHARE) ? 'far' : 'near')
+      : rate && threshold ? (isNear(rate, threshold) ? 'near' : 'far')
         : 'none'
   return {
     standing, ratePercent: rate && toPercentText(rate, RATE_DIGITS), ratedOn: last?.occurredOn ?? null,
