@@ -1,3 +1,4 @@
+import 'reflect-metadata'
 import { Transform, Type } from 'class-transformer'
 import {
   IsArray, IsBoolean, IsEmail, IsIn, IsInt, IsOptional, IsUUID, Length, Matches, Max, Min, ArrayMaxSize, ArrayUnique,

@@ -31,7 +31,9 @@ export interface DemoCircuit {
   unit: MassUnit
   bookLb: number
   lastAddedOn: PlainDate
-  lastPostingId: string | null
+  /** The postings of the latest charge: one per cylinder that it took. */
+  lastPostingIds: string[]
+  lastAddedBefore: PlainDate
   leaks: Map<string, string>
   components: Map<string, string>
 }
@@ -58,8 +60,9 @@ export class Teller {
         circuit.bookLb = 0
         return
       case 'reverse-last':
-        await this.post(this.officer, on, MORNING, { kind: 'reversal', refrigerant: circuit.refrigerant, pounds: circuit.fullChargeLb, reversesId: circuit.lastPostingId, reason: step.reason })
-        circuit.bookLb = circuit.fullChargeLb
+        for (const reversesId of circuit.lastPostingIds)
+          await this.post(this.officer, on, MORNING, { kind: 'reversal', refrigerant: circuit.refrigerant, pounds: circuit.fullChargeLb, reversesId, reason: step.reason })
+        circuit.lastAddedOn = circuit.lastAddedBefore
         return
       case 'status': {
         const { version, systemId, name, refrigerant, category, commissionedOn } = await getCircuit(this.tx, this.officer, circuit.id, this.now)
@@ -108,6 +111,7 @@ export class Teller {
     const days = circuit.isRolling ? 365 : Math.min(365, Math.max(1, daysBetween(circuit.lastAddedOn, on)))
     const allowed = THRESHOLD[circuit.category] * circuit.fullChargeLb * days / 365
     let left = toQuarters(step.pounds ?? allowed * (step.share ?? 0))
+    circuit.lastPostingIds = []
     while (left > 0) {
       const cylinder = await this.filledCylinder(circuit, on)
       const taken = Math.min(left, cylinder.contentLb)
@@ -121,6 +125,7 @@ export class Teller {
       cylinder.contentLb -= taken
     }
     circuit.bookLb = circuit.fullChargeLb
+    circuit.lastAddedBefore = circuit.lastAddedOn
     circuit.lastAddedOn = on
   }
 
@@ -163,7 +168,7 @@ export class Teller {
       cylinderId: null, toCylinderId: null, circuitId: null, partnerId: null, visitId: circuit ? await this.visit(circuit, on) : null, leakId: null, purpose: null, isComplete: true,
       part: null, workDone: null, note: null, reversesId: null, reason: null, ...rest,
     }, this.now)
-    if (circuit && rest.kind !== 'reversal') circuit.lastPostingId = id
+    if (circuit && rest.kind === 'charge') circuit.lastPostingIds.push(id)
     this.count += 1
   }
 
