@@ -21,5 +21,3 @@ export const useOverviewStore = defineStore('overview', () => {
 
   return { overview, problem, load, listCircuits }
 })
-
-export type { CircuitStanding }
