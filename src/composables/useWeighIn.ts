@@ -1,120 +1,134 @@
 import { computed, shallowRef, watch } from 'vue'
 import { useI18n } from 'vue-i18n'
 import { v7 as uuid } from 'uuid'
-import type { WirePosting } from '../../shared/api/ledger'
+import type { WireCylinder } from '../../shared/api/cylinders'
+import type { MassUnit, WirePosting } from '../../shared/api/ledger'
 import type { WireCircuit } from '../../shared/api/places'
 import type { FieldProblem } from '../../shared/api/problem'
 import { localTimeOf } from '../../shared/dates/local-instant'
 import { localDateOf } from '../../shared/dates/plain-date'
-import { ZERO_MASS } from '../../shared/mass/mass'
+import { kg, minus, plus, type Mass } from '../../shared/mass/mass'
+import { refusePosting, type Refusal } from '../../shared/mass/refusals'
+import type { PostingStates } from '../../shared/mass/states'
+import { circuitStateOf, cylinderStateOf } from '../../shared/mass/states-from-wire'
+import { postingWarnings } from '../../shared/mass/warnings'
+import { netOf } from '../../shared/units/mass-units'
+import { isRefusedWith } from '../api/problem'
 import { useLedgerStore } from '../stores/ledger'
 import { useVisitsStore } from '../stores/visits'
 import { useForm } from './useForm'
-import { useOnline } from './useOnline'
-import { useUnits } from './useUnits'
-import { draftOf, isClockTime, netOfEntry, PURPOSES_OF } from './weigh-in/entry'
-import type { WeighInEntry } from './weigh-in/entry'
-import { outlookOf, refusalOfCylinder } from './weigh-in/outlook'
+import { draftOf, enteredOf, isTime, PURPOSES_OF_KIND, type WeighInEntry } from './weigh-in-entry'
+import { outlookOf } from './weigh-in-outlook'
 
-interface WeighInOptions {
-  circuit: () => WireCircuit
-  /** The instant now, ISO 8601. */
-  now?: () => string
-}
+/** [kg] the least that can move: shows at once whether a cylinder can be used at all */
+const LEAST_KG = kg('0.000001')
 
-/** One weigh-in at a circuit, from the first figure to the posting in the ledger. */
-export function useWeighIn({ circuit, now = () => new Date().toISOString() }: WeighInOptions) {
+/** Weighing gas into or out of a circuit: the entry, what it would do, and its one sending. */
+export function useWeighIn({ circuit, massUnit }: { circuit: WireCircuit; massUnit: MassUnit }) {
   const { t } = useI18n()
-  const { massUnit } = useUnits()
-  const { isOnline } = useOnline()
   const ledger = useLedgerStore()
   const visits = useVisitsStore()
+  const cylinder = shallowRef<WireCylinder | null>(null)
   const posted = shallowRef<WirePosting | null>(null)
+  const fresh = freshEntry(circuit, massUnit)
 
-  const first = blank()
-  const form = useForm<WeighInEntry>({ draft: `weigh-in.${circuit().id}`, initial: () => ({ ...first }), check, submit })
+  const form = useForm<WeighInEntry>({
+    draft: `weigh-in.${circuit.id}`,
+    initial: () => ({ ...fresh }),
+    check: () => faults(),
+    submit: send,
+  })
   const entry = form.values
 
-  const today = computed(() => localDateOf(now(), circuit().siteTimeZone))
-  const net = computed(() => netOfEntry(entry, circuit().bookChargeKg))
-  const draft = computed(() => (net.value.ok ? draftOf(entry, circuit(), net.value.mass) : null))
-  const cylinder = computed(() => (entry.kind === 'loss' ? null : entry.cylinder))
-  const outlook = computed(() => draft.value && outlookOf({ draft: draft.value, circuit: circuit(), cylinder: cylinder.value, today: today.value }))
-  /** What stands against this cylinder, whatever the amount. */
-  const cylinderRefusal = computed(() => {
-    const netKg = net.value.ok ? net.value.mass : null
-    const asked = cylinder.value && draftOf(entry, circuit(), netKg ?? ZERO_MASS)
-    return asked && cylinder.value ? refusalOfCylinder({ draft: asked, circuit: circuit(), cylinder: cylinder.value, today: today.value }) : null
+  const today = computed(() => localDateOf(new Date().toISOString(), circuit.siteTimeZone))
+  const isLoss = computed(() => entry.kind === 'loss')
+  const direction = computed(() => (entry.kind === 'recovery' ? 'in' : 'out'))
+  const net = computed(() => {
+    const entered = enteredOf(entry)
+    return entered ? netOf(entered, direction.value) : { ok: true as const, mass: kg(circuit.bookChargeKg) }
   })
-  const refusal = computed(() => outlook.value?.refusal ?? cylinderRefusal.value)
-  /** Sent, and no answer came: it may stand in the ledger already, and sending it again posts it once. */
-  const isUnsent = computed(() => form.problem.value?.kind === 'offline')
+  const circuitState = computed(() => circuitStateOf(circuit, entry.occurredOn ?? today.value))
 
-  /** A new entry: its posting has its own id from the start. */
-  function blank(): WeighInEntry {
-    const at = now()
-    const { siteTimeZone, leaks, bookChargeKg, status } = circuit()
-    const openLeaks = leaks.filter((leak) => leak.repairedOn === null)
-    const kind = status === 'retired' ? 'recovery' : 'charge'
-    return {
-      id: uuid(), kind, cylinder: null, unit: massUnit.value, how: 'readings', before: null, after: null, amount: null,
-      isComplete: false, isWhole: Number(bookChargeKg) > 0, purpose: PURPOSES_OF[kind][0] ?? null,
-      leakId: openLeaks.length === 1 ? openLeaks[0]?.id ?? null : null,
-      part: null, workDone: null, note: null, occurredOn: localDateOf(at, siteTimeZone), time: localTimeOf(at, siteTimeZone), visitId: null, newVisitId: uuid(),
-    }
+  const statesWith = (chosen: WireCylinder | null): PostingStates =>
+    ({ circuit: circuitState.value, cylinder: chosen && !isLoss.value ? cylinderStateOf(chosen) : undefined })
+
+  function draftWith(chosen: WireCylinder | null, massKg: Mass) {
+    return isLoss.value || chosen ? draftOf(entry, { circuit, cylinder: chosen, massKg }) : null
+  }
+  const draft = computed(() => (net.value.ok && !net.value.mass.isZero() ? draftWith(cylinder.value, net.value.mass) : null))
+  const refusal = computed<Refusal | null>(() => draft.value && refusePosting(draft.value, statesWith(cylinder.value), today.value))
+  const warnings = computed(() => (draft.value && !refusal.value ? postingWarnings(draft.value, statesWith(cylinder.value), today.value) : []))
+  const outlook = computed(() => (draft.value ? outlookOf(circuit, circuitState.value, draft.value) : null))
+  /** [kg] by the book, once it is posted */
+  const cylinderAfterKg = computed(() => {
+    if (!cylinder.value || !net.value.ok || isLoss.value) return null
+    const contentKg = kg(cylinder.value.contentKg)
+    return entry.kind === 'recovery' ? plus(contentKg, net.value.mass) : minus(contentKg, net.value.mass)
+  })
+
+  /** Why a cylinder cannot be used here at all, whatever the amount; null if it can. */
+  function refuseCylinder(chosen: WireCylinder): Refusal | null {
+    const trial = draftWith(chosen, LEAST_KG)
+    return trial && refusePosting(trial, statesWith(chosen), today.value)
   }
 
-  function check(values: WeighInEntry): FieldProblem[] {
-    const wrong: FieldProblem[] = []
-    const named = (field: string, label: string, words: string) => wrong.push({ field, message: `${label}: ${words}` })
-    if (values.kind !== 'loss' && !values.cylinder) wrong.push({ field: 'cylinderId', message: t('weighIn.cylinder.missing') })
-    const reading = netOfEntry(values, circuit().bookChargeKg)
-    if (!reading.ok) named(reading.field, t(`weighIn.scale.${reading.field}`), t(`units.fault.${reading.code}`))
-    if (!values.occurredOn) named('occurredOn', t('weighIn.work.date'), t('weighIn.work.dateMissing'))
-    if (!isClockTime(values.time)) named('time', t('weighIn.work.time'), t('weighIn.work.timeWrong'))
-    return wrong
+  function faults(): FieldProblem[] {
+    const found: FieldProblem[] = []
+    if (!isLoss.value && !cylinder.value) found.push({ field: 'cylinderId', message: t('weighIn.cylinder.missing') })
+    if (!net.value.ok) found.push({ field: net.value.field, message: t(`units.fault.${net.value.code}`) })
+    else if (net.value.mass.isZero()) found.push({ field: 'amount', message: t('weighIn.loss.empty') })
+    if (!entry.occurredOn) found.push({ field: 'occurredOn', message: t('weighIn.work.dateMissing') })
+    if (!isTime(entry.time)) found.push({ field: 'time', message: t('weighIn.work.timeWrong') })
+    return found
   }
 
-  /** Looks at the entry as it stands. @returns whether it can be looked at once more and posted */
-  function review(): boolean {
+  /** Looks at everything that can be seen from here. @returns whether it may be reviewed */
+  function look(): boolean {
     form.problem.value = null
-    form.fieldProblems.value = check(entry)
-    return form.fieldProblems.value.length === 0 && refusal.value === null
+    form.fieldProblems.value = faults()
+    return form.fieldProblems.value.length === 0 && !refusal.value
   }
 
-  async function submit(values: WeighInEntry): Promise<void> {
-    const reading = netOfEntry(values, circuit().bookChargeKg)
-    const built = reading.ok ? draftOf({ ...values, visitId: await visitOf(values) }, circuit(), reading.mass) : null
-    if (!built) throw new Error('An entry that was not reviewed was sent.')
-    posted.value = await ledger.post(built)
+  /** The visit's id is kept in the entry, so that a second sending is word for word the first. */
+  async function send(): Promise<void> {
+    if (!entry.occurredOn) return
+    if (entry.visitId === null) entry.visitId = (await visits.mine(circuit.siteId, entry.occurredOn)) ?? uuid()
+    await visits.create({ id: entry.visitId, siteId: circuit.siteId, visitedOn: entry.occurredOn, remark: null })
+    if (draft.value) posted.value = await ledger.post(draft.value)
   }
 
-  /** The visit of this person at this site on this day; begun with the first weigh-in. */
-  async function visitOf({ visitId, newVisitId, occurredOn }: WeighInEntry): Promise<string | null> {
-    if (visitId || !occurredOn) return visitId
-    const { siteId } = circuit()
-    // Kept with the entry: a repeat must carry the same visit, or it would be another posting.
-    entry.visitId = (await visits.mine(siteId, occurredOn)) ?? (await visits.create({ id: newVisitId, siteId, visitedOn: occurredOn, remark: null })).id
-    return entry.visitId
+  /** What was sent under this id before and stands; null if nothing does. */
+  const standingId = computed(() => (isRefusedWith(form.problem.value, 'posting-id-reused') ? entry.id : null))
+
+  async function submit(): Promise<boolean> {
+    const isSent = await form.send()
+    // Refused: it is mended under a new id. Fate unknown: it is sent again unchanged.
+    if (form.problem.value?.kind === 'refused' && standingId.value === null) entry.id = uuid()
+    return isSent
   }
 
-  /** The next one, with an id of its own. */
-  function beginAnew(): void {
+  function beginAgain(): void {
+    form.reset(freshEntry(circuit, massUnit))
+    cylinder.value = null
     posted.value = null
-    form.reset(blank())
   }
 
   watch(() => entry.kind, (kind) => {
-    entry.purpose = PURPOSES_OF[kind][0] ?? null
-    entry.isComplete = false
+    if (!PURPOSES_OF_KIND[kind].includes(entry.purpose)) entry.purpose = PURPOSES_OF_KIND[kind][0] ?? 'leak'
+    entry.isComplete = kind === 'recovery'
+    form.fieldProblems.value = []
   })
-  watch(() => entry.occurredOn, () => {
-    entry.visitId = null
-    entry.newVisitId = uuid()
-  })
-  watch(isOnline, (isBack) => {
-    if (isBack && isUnsent.value) void form.send()
-  })
+  watch(() => entry.occurredOn, () => (entry.visitId = null))
+  watch(cylinder, (chosen) => (entry.cylinderId = chosen?.id ?? null))
 
-  return { entry, form, today, net, outlook, refusal, cylinderRefusal, isUnsent, posted, review, beginAnew }
+  return { form, entry, cylinder, posted, net, draft, refusal, warnings, outlook, cylinderAfterKg, today, standingId, refuseCylinder, look, submit, beginAgain }
+}
+
+function freshEntry(circuit: WireCircuit, unit: MassUnit): WeighInEntry {
+  const now = new Date().toISOString()
+  return {
+    id: uuid(), visitId: null, kind: 'charge', cylinderId: null, isNet: false, unit, before: '', after: '', amount: '', isWholeLoss: true, isComplete: false,
+    purpose: 'leak', leakId: null, part: null, workDone: null, note: null,
+    occurredOn: localDateOf(now, circuit.siteTimeZone), time: localTimeOf(now, circuit.siteTimeZone),
+  }
 }
