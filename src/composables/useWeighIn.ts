@@ -24,41 +24,42 @@ import { outlookOf } from './weigh-in-outlook'
 const LEAST_KG = kg('0.000001')
 
 /** Weighing gas into or out of a circuit: the entry, what it would do, and its one sending. */
-export function useWeighIn({ circuit, massUnit }: { circuit: WireCircuit; massUnit: MassUnit }) {
+export function useWeighIn({ circuit: current, massUnit }: { circuit: () => WireCircuit; massUnit: MassUnit }) {
   const { t } = useI18n()
   const ledger = useLedgerStore()
   const visits = useVisitsStore()
   const cylinder = shallowRef<WireCylinder | null>(null)
   const posted = shallowRef<WirePosting | null>(null)
-  const fresh = freshEntry(circuit, massUnit)
+  const circuit = computed(current)
+  const fresh = freshEntry(circuit.value, massUnit)
 
   const form = useForm<WeighInEntry>({
-    draft: `weigh-in.${circuit.id}`,
+    draft: `weigh-in.${circuit.value.id}`,
     initial: () => ({ ...fresh }),
     check: () => faults(),
     submit: send,
   })
   const entry = form.values
 
-  const today = computed(() => localDateOf(new Date().toISOString(), circuit.siteTimeZone))
+  const today = computed(() => localDateOf(new Date().toISOString(), circuit.value.siteTimeZone))
   const isLoss = computed(() => entry.kind === 'loss')
   const direction = computed(() => (entry.kind === 'recovery' ? 'in' : 'out'))
   const net = computed(() => {
     const entered = enteredOf(entry)
-    return entered ? netOf(entered, direction.value) : { ok: true as const, mass: kg(circuit.bookChargeKg) }
+    return entered ? netOf(entered, direction.value) : { ok: true as const, mass: kg(circuit.value.bookChargeKg) }
   })
-  const circuitState = computed(() => circuitStateOf(circuit, entry.occurredOn ?? today.value))
+  const circuitState = computed(() => circuitStateOf(circuit.value, entry.occurredOn ?? today.value))
 
   const statesWith = (chosen: WireCylinder | null): PostingStates =>
     ({ circuit: circuitState.value, cylinder: chosen && !isLoss.value ? cylinderStateOf(chosen) : undefined })
 
   function draftWith(chosen: WireCylinder | null, massKg: Mass) {
-    return isLoss.value || chosen ? draftOf(entry, { circuit, cylinder: chosen, massKg }) : null
+    return isLoss.value || chosen ? draftOf(entry, { circuit: circuit.value, cylinder: chosen, massKg }) : null
   }
   const draft = computed(() => (net.value.ok && !net.value.mass.isZero() ? draftWith(cylinder.value, net.value.mass) : null))
   const refusal = computed<Refusal | null>(() => draft.value && refusePosting(draft.value, statesWith(cylinder.value), today.value))
   const warnings = computed(() => (draft.value && !refusal.value ? postingWarnings(draft.value, statesWith(cylinder.value), today.value) : []))
-  const outlook = computed(() => (draft.value ? outlookOf(circuit, circuitState.value, draft.value) : null))
+  const outlook = computed(() => (draft.value ? outlookOf(circuit.value, circuitState.value, draft.value) : null))
   /** [kg] by the book, once it is posted */
   const cylinderAfterKg = computed(() => {
     if (!cylinder.value || !net.value.ok || isLoss.value) return null
@@ -92,8 +93,8 @@ export function useWeighIn({ circuit, massUnit }: { circuit: WireCircuit; massUn
   /** The visit's id is kept in the entry, so that a second sending is word for word the first. */
   async function send(): Promise<void> {
     if (!entry.occurredOn) return
-    if (entry.visitId === null) entry.visitId = (await visits.mine(circuit.siteId, entry.occurredOn)) ?? uuid()
-    await visits.create({ id: entry.visitId, siteId: circuit.siteId, visitedOn: entry.occurredOn, remark: null })
+    if (entry.visitId === null) entry.visitId = (await visits.mine(circuit.value.siteId, entry.occurredOn)) ?? uuid()
+    await visits.create({ id: entry.visitId, siteId: circuit.value.siteId, visitedOn: entry.occurredOn, remark: null })
     if (draft.value) posted.value = await ledger.post(draft.value)
   }
 
@@ -108,7 +109,7 @@ export function useWeighIn({ circuit, massUnit }: { circuit: WireCircuit; massUn
   }
 
   function beginAgain(): void {
-    form.reset(freshEntry(circuit, massUnit))
+    form.reset(freshEntry(circuit.value, massUnit))
     cylinder.value = null
     posted.value = null
   }
