@@ -10,8 +10,11 @@ import { say, sentenceOf } from './say.mjs'
 export function runScript(work, { interruptedCode }) {
   const stops = []
   let ending = null
-  const end = (code) => {
-    ending ??= stopAll(stops).then((isClean) => process.exit(isClean ? code : 1))
+  const end = (code, lastWord = null) => {
+    ending ??= stopAll(stops).then((isClean) => {
+      if (isClean && lastWord) say(lastWord)
+      process.exit(isClean ? code : 1)
+    })
     return ending
   }
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'])
@@ -19,7 +22,7 @@ export function runScript(work, { interruptedCode }) {
       if (ending) return
       say('\nStopping …')
       endShown()
-      void end(interruptedCode)
+      void end(interruptedCode, 'Stopped.')
     })
   return work((stop) => stops.push(stop)).then(
     (code) => end(code),
