@@ -111,7 +111,7 @@ export function serviceRecord(record: ServiceRecord, making: Making): { sheet: S
     sheet,
     draw: async () => {
       drawMasthead(sheet, {
-        company: making.companyName, title, lead: words.text('record.lead'),
+        company: making.companyName, title, lead: words.text(record.site.jurisdiction.startsWith('US') ? 'record.lead' : 'record.leadElsewhere'),
         ticket: [{ label: words.text('record.servicedOn'), value: date }, { label: words.text('summary.site'), value: record.site.name }],
       })
       drawParties(sheet, words, record, making)

@@ -599,7 +599,7 @@ export const en = {
       checkedOn: 'Checked on',
       decisions: 'Rule packs',
       decision: '{pack}: {applies}. {reasons}',
-      responsible: 'The owner or operator of the appliance is responsible for what the rule asks for (40 CFR 82.157(a)); whoever services it hands over the records. A rate at the threshold is not above it.',
+      responsible: 'The owner or operator of the appliance is responsible for what the rules ask for; whoever services it hands over the records. A rate at the threshold is not above it.',
       caution: 'Local regulation and licensed practice decide. This paper computes from what was weighed and recorded; it is no legal advice.',
     },
     summary: {
@@ -644,6 +644,7 @@ export const en = {
     record: {
       title: 'Service record',
       lead: 'Handed to the owner or operator by whoever maintained, serviced, repaired or disposed of the appliance, with the items of 40 CFR 82.157(l). Keep it for 3 years.',
+      leadElsewhere: 'Handed to the owner or operator by whoever maintained, serviced, repaired or disposed of the appliance.',
       servicedOn: 'Date of service',
       location: 'Location of the appliance',
       servicedBy: 'Serviced by',

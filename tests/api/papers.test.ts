@@ -157,7 +157,8 @@ describe('the service record, 40 CFR 82.157(l)', () => {
     const { id } = await charge({ pounds: '5', on: '2026-02-01', purpose: null })
     const { text } = await pdfOf(technician, `/api/papers/service-record.pdf?postingId=${id}`)
     for (const item of [
-      'not recorded: the net amount was entered', 'Part of the appliance', 'Type of work on that part', 'Serial number', 'No leak recorded as found or repaired.',
+      'Scale readings not recorded: the net amount was entered', 'Part of the appliance not recorded', 'Type of work on that part not recorded', 'Purpose not recorded',
+      'Serial number not recorded', 'Maker and model not recorded', 'No leak recorded as found or repaired.',
       'No verification test recorded.', 'No watch mark on this circuit.',
     ]) expect(text).toContain(item)
     // address of the owner, maker, serial number, readings, amount as entered, part, purpose, work

@@ -4,8 +4,8 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import type supertest from 'supertest'
 
-/** What another program (poppler's pdftotext) reads in a PDF, in reading order; runs of white space are one space. */
-export const pdfText = (pdf: Buffer): string => poppler('pdftotext', pdf, ['-enc', 'UTF-8'], ['-']).replace(/\s+/g, ' ').trim()
+/** What another program (poppler's pdftotext) reads in a PDF, in the order in which the content was written; runs of white space are one space. */
+export const pdfText = (pdf: Buffer): string => poppler('pdftotext', pdf, ['-raw', '-enc', 'UTF-8'], ['-']).replace(/\s+/g, ' ').trim()
 /** Title, tags, page count, size, language and script of a PDF, one a line, by poppler's pdfinfo. */
 export const pdfInfo = (pdf: Buffer): string => poppler('pdfinfo', pdf, [], [])
 
