@@ -1,5 +1,4 @@
 // npm run dev: the page from sources, the server built anew at each change, on the same data as npm start.
-import { existsSync } from 'node:fs'
 import { join } from 'node:path'
 import { startCluster } from './database/cluster.mjs'
 import { ensurePostgresql } from './database/postgresql.mjs'
@@ -42,7 +41,7 @@ async function watchServer({ folder, env, atEnd }) {
     await server?.stop()
     server = null
     await runServerCommand({ folder, command: 'migrate', env })
-    if (existsSync(join(folder, 'cli/load-demo.js'))) await runServerCommand({ folder, command: 'load-demo', env })
+    await runServerCommand({ folder, command: 'load-demo', env })
     server = await startServer({ folder, env })
     server.ended.catch((error) => say(`${sentenceOf(error)}\nIt starts again after the next change.`))
     say('The server is up.')

@@ -1,5 +1,4 @@
 // npm start: everything from a fresh machine to a page that answers. Safe to run again: it keeps what is there.
-import { existsSync } from 'node:fs'
 import { join } from 'node:path'
 import { startCluster } from './database/cluster.mjs'
 import { ensurePostgresql } from './database/postgresql.mjs'
@@ -29,7 +28,7 @@ await runScript(async (atEnd) => {
   const folder = join(buildFolder, 'server')
   const env = serverEnvironment({ mode: 'demo', host, port, databases, mailUrl, mailFolder, clientFolder: join(buildFolder, 'client') })
   await runServerCommand({ folder, command: 'migrate', env })
-  if (existsSync(join(folder, 'cli/load-demo.js'))) await runServerCommand({ folder, command: 'load-demo', env })
+  await runServerCommand({ folder, command: 'load-demo', env })
   const server = await startServer({ folder, env })
   atEnd(server.stop)
 

@@ -2,11 +2,13 @@ import { rmSync } from 'node:fs'
 import { join } from 'node:path'
 import { anyFreePort, whyNotFree } from '../support/ports.mjs'
 import { Stop } from '../support/say.mjs'
-import { freeMegabytes, lastLines, writeForDatabase } from './files.mjs'
+import { freeMegabytes, lastLines, sizeOf, writeForDatabase } from './files.mjs'
 import { programsFor, runAsDatabaseUser, SUPERUSER } from './postgresql.mjs'
 
 const START_SECONDS = '60'
 const NEEDED_MEGABYTES = 150 // an empty database of PostgreSQL 15 takes 40, its first log segments 32
+
+const isDiskFull = (words) => /No space left on device|Disk quota exceeded|Check free disk space/.test(words)
 
 const diskFull = (folder) =>
   new Stop(`The disk is full: the database in ${folder} cannot be written (${freeMegabytes(folder)} MB are free). Free some space and start again.`)
@@ -27,7 +29,7 @@ export async function makeDataFolder({ folder, data, password }) {
     ])
     if (code === 0) return
     rmSync(data, { recursive: true, force: true })
-    throw /No space left on device|Disk quota exceeded/.test(output) ? diskFull(folder) : new Stop(`PostgreSQL could not make a database in ${data}:\n${output}`)
+    throw isDiskFull(output) ? diskFull(folder) : new Stop(`PostgreSQL could not make a database in ${data}:\n${output}`)
   } finally {
     rmSync(passwordFile, { force: true })
   }
@@ -40,14 +42,15 @@ export async function makeDataFolder({ folder, data, password }) {
  */
 export async function startDatabase({ folder, data, log, port, options = [], otherPort = anyFreePort }) {
   for (let attempt = 1; ; attempt++) {
+    const before = sizeOf(log)
     // No socket file: its path may be longer than the system allows, and everything goes by loopback.
     const settings = ['listen_addresses=127.0.0.1', "unix_socket_directories=''", ...options].map((option) => `-c ${option}`)
     const { code } = await runAsDatabaseUser(join(programsFor(data), 'pg_ctl'), [
       'start', '-w', '-t', START_SECONDS, '-s', '-D', data, '-l', log, '-o', `-p ${port} ${settings.join(' ')}`,
     ])
     if (code === 0) return port
-    const words = lastLines(log)
-    if (/No space left on device|Disk quota exceeded/.test(words)) throw diskFull(folder)
+    const words = lastLines(log, before)
+    if (isDiskFull(words)) throw diskFull(folder)
     const isTaken = /Address already in use/.test(words) || (await whyNotFree(port)) !== null
     if (!isTaken || attempt === 3) throw new Stop(`PostgreSQL cannot start. The last lines of ${log}:\n\n${words}\n`)
     port = await otherPort()

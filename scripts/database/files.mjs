@@ -1,4 +1,4 @@
-import { chownSync, mkdirSync, readFileSync, statfsSync, writeFileSync } from 'node:fs'
+import { chownSync, mkdirSync, readFileSync, statfsSync, statSync, writeFileSync } from 'node:fs'
 import { execFileSync } from 'node:child_process'
 import { databaseUser } from './postgresql.mjs'
 
@@ -33,11 +33,12 @@ export function freeMegabytes(folder) {
   return Math.floor((bavail * bsize) / MEGABYTE)
 }
 
-/** The last lines of a log, indented for quoting. */
-export function lastLines(file, count = 8) {
-  try {
-    return readFileSync(file, 'utf8').trimEnd().split('\n').slice(-count).map((line) => `  ${line}`).join('\n')
-  } catch {
-    return ''
-  }
+export const sizeOf = (file) => statSync(file, { throwIfNoEntry: false })?.size ?? 0
+
+const QUOTED = 8 // lines
+
+/** The last lines of a log, indented for quoting; of those behind `from` bytes, so that nothing of an earlier run is taken for the reason. */
+export function lastLines(file, from = 0) {
+  if (sizeOf(file) <= from) return '  (nothing was written)'
+  return readFileSync(file).subarray(from).toString('utf8').trimEnd().split('\n').slice(-QUOTED).map((line) => `  ${line}`).join('\n')
 }

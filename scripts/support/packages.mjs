@@ -16,7 +16,7 @@ export async function ensurePackages() {
   if (readIfThere(mark) === hash) return
   if (!isInstalled(lock)) {
     say('Installing the npm packages …')
-    if ((await npm(['ci'])) !== 0)
+    if ((await npm(['ci', '--no-progress'])) !== 0)
       throw new Stop('The npm packages could not be installed; npm says why above. Mostly the network or the disk is to blame. Then start again.')
   }
   writeFileSync(mark, hash)

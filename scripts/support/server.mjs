@@ -1,9 +1,9 @@
 import { spawn } from 'node:child_process'
-import { closeSync, existsSync, mkdirSync, openSync, renameSync, statSync } from 'node:fs'
+import { closeSync, mkdirSync, openSync, renameSync } from 'node:fs'
 import { randomBytes } from 'node:crypto'
 import { join } from 'node:path'
 import { setTimeout as wait } from 'node:timers/promises'
-import { lastLines } from '../database/files.mjs'
+import { lastLines, sizeOf } from '../database/files.mjs'
 import { dataFolder } from './project.mjs'
 import { show } from './commands.mjs'
 import { readSettings, writeSettings } from './settings.mjs'
@@ -57,12 +57,13 @@ export async function runServerCommand({ folder, command, env }) {
  */
 export async function startServer({ folder, env }) {
   const output = openLog()
+  const before = sizeOf(log)
   const child = spawn(process.execPath, ['--enable-source-maps', join(folder, 'main.js')], { env, cwd: folder, detached: true, stdio: ['ignore', output, output] })
   closeSync(output)
   const exited = new Promise((resolve) => child.once('exit', resolve))
   let isStopping = false
   const ended = exited.then(() => {
-    if (!isStopping) throw new Stop(`The server ended by itself. The last lines of ${log}:\n\n${lastLines(log)}\n`)
+    if (!isStopping) throw new Stop(`The server ended by itself. The last lines of ${log}:\n\n${lastLines(log, before)}\n`)
   })
   const stop = async () => {
     isStopping = true
@@ -72,7 +73,7 @@ export async function startServer({ folder, env }) {
     await exited
   }
   try {
-    await Promise.race([ended, untilReady(env)])
+    await Promise.race([ended, untilReady(env, before)])
   } catch (error) {
     ended.catch(() => {}) // the one error is enough
     await stop()
@@ -81,18 +82,18 @@ export async function startServer({ folder, env }) {
   return { stop, ended }
 }
 
-async function untilReady(env) {
+async function untilReady(env, before) {
   const host = env.WEIGHBACK_HOST === '0.0.0.0' ? '127.0.0.1' : env.WEIGHBACK_HOST
   for (let waited = 0; waited < READY_SECONDS * 20; waited++) {
     const isReady = await fetch(`http://${host}:${env.WEIGHBACK_PORT}/ready`).then((answer) => answer.ok, () => false)
     if (isReady) return
     await wait(50)
   }
-  throw new Stop(`The server does not answer after ${READY_SECONDS} seconds. The last lines of ${log}:\n\n${lastLines(log)}\n`)
+  throw new Stop(`The server does not answer after ${READY_SECONDS} seconds. The last lines of ${log}:\n\n${lastLines(log, before)}\n`)
 }
 
 function openLog() {
   mkdirSync(dataFolder, { recursive: true, mode: 0o700 })
-  if (existsSync(log) && statSync(log).size > LARGEST_LOG) renameSync(log, `${log}.old`)
+  if (sizeOf(log) > LARGEST_LOG) renameSync(log, `${log}.old`)
   return openSync(log, 'a')
 }
