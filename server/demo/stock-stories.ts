@@ -1,4 +1,3 @@
-import { v7 as uuid } from 'uuid'
 import { addDays, type PlainDate } from '../../shared/dates/plain-date'
 import type { Actor } from '../actor'
 import { toQuarters, type Stock } from './stock'
@@ -42,11 +41,11 @@ export async function tellOfStock({ teller, stock, officer, technicians, partner
   await teller.post(officer, on(90), MORNING, { kind: 'opening-stock', cylinderId: disposable.id, refrigerant: 'R-134a', pounds: 30 })
   await teller.post(officer, on(30), MORNING, { kind: 'return', cylinderId: disposable.id, partnerId: supplierId, refrigerant: 'R-134a', pounds: 10, note: 'Wrong delivery, part returned' })
 
-  const pastTest = await stock.make('R-22', 'service', null, { testDueOn: on(-30) })
+  const pastTest = await stock.make('R-22', 'service', null, { testDueOn: on(30) })
   await teller.post(officer, on(60), MORNING, { kind: 'opening-stock', cylinderId: pastTest.id, refrigerant: 'R-22', pounds: 21.5, note: 'Found in the old store' })
   const mixed = await stock.make('R-404A', 'recovery', null, { contents: 'mixed' })
   await teller.post(officer, on(200), MORNING, { kind: 'opening-stock', cylinderId: mixed.id, refrigerant: 'R-404A', pounds: 18.75, note: 'Mixed, for destruction' })
   await teller.post(officer, on(45), MORNING, { kind: 'destruction', cylinderId: mixed.id, partnerId: partners.get('destroyer') ?? null, refrigerant: 'R-404A', pounds: 12, note: 'First lot' })
   await stock.make('R-22', 'recovery', holder, { ownerCustomerId: customers.get('Meridian Row Offices') ?? null })
-  for (const refrigerant of ['R-410A', 'R-454B', 'R-407C', 'R-134a']) await stock.make(refrigerant, 'recovery', null, { number: `V-${uuid().slice(-4)}` })
+  for (const refrigerant of ['R-410A', 'R-454B', 'R-407C', 'R-134a']) await stock.make(refrigerant, 'recovery', null)
 }

@@ -490,7 +490,7 @@ export const en = {
     jurisdiction: 'Jurisdiction', jurisdictions: { US: 'United States', 'US-CA': 'United States, California', EU: 'European Union', GB: 'Great Britain' },
     method: 'Leak rate by', methods: { annualizing: 'Annualizing method', rolling: 'Rolling average method' }, methodHint: 'One method for all appliances of a facility (40 CFR 82.152).',
     packs: 'Rule packs', packsHint: 'Which rules are watched here. Local regulation and licensed practice decide.', noPacks: 'No rule pack is switched on: no threshold is watched here.',
-    systems: 'Systems', circuits: 'Circuits', over: 'Over', near: 'Near or flat', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
+    systems: 'Systems', circuits: 'Circuits', circuitCount: 'no circuit | one circuit | {count} circuits', over: 'Over', near: 'Near or flat', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
     summary: 'Leak-rate summary', from: 'From', to: 'To', summaryText: 'All circuits of this site for a period, as PDF.', open: 'Open the PDF',
   },
   system: {
@@ -941,7 +941,7 @@ export const en = {
     },
     marks: {
       title: 'Watch marks', none: 'Nothing to watch.', add: 'Leave a mark', what: 'What to watch', component: 'On which component', noComponent: 'the circuit as a whole', markedOn: 'Seen on',
-      saved: 'The mark is left for the next visit.', resolve: 'It is mended', resolveOf: 'Mended: {text}', resolved: 'mended {date}', resolvedSaved: 'The mark is taken off.', by: '{person}, {date}',
+      saved: 'The mark is left for the next visit.', resolve: 'It is mended', resolveOf: 'Mended: {text}', resolved: 'mended {date}', resolvedSaved: 'The mark is taken off.', resolvedOn: 'Mended on', by: '{person}, {date}',
       onSister: 'on the sister circuit {circuit}', open: 'One open mark | {count} open marks', earlier: 'Mended ones',
     },
     leaks: {
