@@ -16,16 +16,16 @@ export const createCircuit = (body: CircuitDraft): Promise<WireCircuit> => post<
 export const changeCircuit = (id: string, version: number, body: Omit<CircuitDraft, 'fullCharge'>): Promise<WireCircuit> =>
   patch<WireCircuit>(pathOf(id), { body, version })
 
-export const reviseFullCharge = (id: string, body: FullChargeDraft): Promise<unknown> => post(`${pathOf(id)}/full-charges`, { body })
-export const addComponent = (id: string, body: ComponentDraft): Promise<unknown> => post(`${pathOf(id)}/components`, { body })
-export const changeComponent = (componentId: string, body: ComponentDraft): Promise<unknown> =>
-  patch(`/api/components/${encodeURIComponent(componentId)}`, { body })
-export const addMark = (id: string, body: MarkDraft): Promise<unknown> => post(`${pathOf(id)}/marks`, { body })
-export const resolveMark = (markId: string, resolvedOn: PlainDate): Promise<unknown> =>
-  post(`/api/marks/${encodeURIComponent(markId)}/resolve`, { body: { resolvedOn } })
-export const addLeak = (id: string, body: LeakDraft): Promise<unknown> => post(`${pathOf(id)}/leaks`, { body })
-export const repairLeak = (leakId: string, body: RepairDraft): Promise<unknown> => post(`/api/leaks/${encodeURIComponent(leakId)}/repair`, { body })
-export const addVerification = (id: string, body: VerificationDraft): Promise<unknown> => post(`${pathOf(id)}/verifications`, { body })
+export const reviseFullCharge = (id: string, body: FullChargeDraft): Promise<WireCircuit> => post<WireCircuit>(`${pathOf(id)}/full-charges`, { body })
+export const addComponent = (id: string, body: ComponentDraft): Promise<WireCircuit> => post<WireCircuit>(`${pathOf(id)}/components`, { body })
+export const changeComponent = (componentId: string, body: ComponentDraft): Promise<WireCircuit> =>
+  patch<WireCircuit>(`/api/components/${encodeURIComponent(componentId)}`, { body })
+export const addMark = (id: string, body: MarkDraft): Promise<WireCircuit> => post<WireCircuit>(`${pathOf(id)}/marks`, { body })
+export const resolveMark = (markId: string, resolvedOn: PlainDate): Promise<WireCircuit> =>
+  post<WireCircuit>(`/api/marks/${encodeURIComponent(markId)}/resolve`, { body: { resolvedOn } })
+export const addLeak = (id: string, body: LeakDraft): Promise<WireCircuit> => post<WireCircuit>(`${pathOf(id)}/leaks`, { body })
+export const repairLeak = (leakId: string, body: RepairDraft): Promise<WireCircuit> => post<WireCircuit>(`/api/leaks/${encodeURIComponent(leakId)}/repair`, { body })
+export const addVerification = (id: string, body: VerificationDraft): Promise<WireCircuit> => post<WireCircuit>(`${pathOf(id)}/verifications`, { body })
 
 /** Where the leak-rate summary of a site for a period is opened. */
 export const leakRateSummaryAddress = (siteId: string, from: PlainDate, to: PlainDate): string =>
