@@ -996,6 +996,13 @@ export const en = {
       title: 'Before it is posted', waiting: 'Enter the weights: what they do to the leak rate shows here.', now: 'Now', cannot: 'This cannot be posted', look: 'Look once more', book: 'Book charge then', lossRevealed: 'Lost since the last full charge', cylinderAfter: 'Left in the cylinder', found: 'More than the book knew',
       reached: 'Exactly at the threshold is not above it.',
     },
+    cautions: {
+      liquid: 'Liquid refrigerant freezes skin and eyes: wear goggles and gloves.',
+      vapour: 'Vapour displaces air, low places first: ventilate.',
+      flammable: '{refrigerant} burns (class {class}): no spark, flame or hot surface near, ventilate, and use equipment made for it.',
+      toxic: '{refrigerant} is toxic (class {class}): wear the protection its safety sheet names.',
+      fill: 'Never fill a cylinder above 80 %, past its test date, or with another gas than it holds.',
+    },
     warnings: {
       'above-full-charge': 'This is {over} more than the whole circuit holds ({full}).',
       'full-charge-unknown': 'The full charge is not determined: no rate can be computed.',
