@@ -65,7 +65,7 @@ export default tseslint.config(
     rules: {
       '@typescript-eslint/no-floating-promises': 'error',
       '@typescript-eslint/await-thenable': 'error',
-      '@typescript-eslint/switch-exhaustiveness-check': 'error',
+      '@typescript-eslint/switch-exhaustiveness-check': ['error', { considerDefaultExhaustiveForUnions: true }],
     },
   },
   {
@@ -76,7 +76,7 @@ export default tseslint.config(
       'vue/component-api-style': ['error', ['script-setup']],
       'vue/define-emits-declaration': 'error',
       'vue/define-props-declaration': 'error',
-      'vue/no-bare-strings-in-template': ['error', { allowlist: ['·', '–', '—', '/', '%', '(', ')', ':', ',', '.', '+', '×', '→', '=', '*'] }],
+      'vue/no-bare-strings-in-template': ['error', { allowlist: ['·', ';', '–', '—', '/', '%', '(', ')', ':', ',', '.', '+', '×', '→', '=', '*'] }],
       'vue/require-default-prop': 'off', // TypeScript says which are optional
       // How lines are broken is left to whoever writes them.
       'vue/max-attributes-per-line': 'off',
