@@ -6,6 +6,7 @@ interface Table { rows: readonly Row[] }
 
 const tables = document.refrigerants as unknown as Record<string, Table>
 const KELVIN = 273.15
+const HALVINGS = 40 // of a table 170 K wide: far below a millionth of a kelvin
 
 export const SATURATION_SOURCE = `${document.source}, Bell et al., Ind. Eng. Chem. Res. 53 (2014) 2498`
 
@@ -32,6 +33,50 @@ export function saturationAt(refrigerant: string, column: SaturationColumn, cels
   const last = curve.x.at(-1) ?? 0
   if (!(x >= first && x <= last)) return { ok: false, code: 'outside-table', lowest: 1 / last - KELVIN, highest: 1 / first - KELVIN }
   return { ok: true, value: Math.exp(interpolate(curve, x)) }
+}
+
+/**
+ * The temperature at which a saturation property has a value; the pressures and the vapour density rise with
+ * temperature, the liquid density falls.
+ *
+ * @param value  [kPa absolute] or [kg/m³]
+ * @returns [°C] to a millionth of a kelvin, or the range of the property in the table
+ */
+export function temperatureAt(refrigerant: string, column: SaturationColumn, value: number): Looked {
+  const curve = curveOf(refrigerant, column)
+  if (!curve) return { ok: false, code: 'no-table' }
+  let [cold, hot] = [curve.x.at(-1) ?? 0, curve.x[0] ?? 0]
+  const [atCold, atHot] = [Math.exp(interpolate(curve, cold)), Math.exp(interpolate(curve, hot))]
+  const [lowest, highest] = [Math.min(atCold, atHot), Math.max(atCold, atHot)]
+  if (!(value >= lowest && value <= highest)) return { ok: false, code: 'outside-table', lowest, highest }
+  const isRising = atHot > atCold
+  const sought = Math.log(value)
+  for (let halving = 0; halving < HALVINGS; halving++) {
+    const middle = (cold + hot) / 2
+    const isBelow = interpolate(curve, middle) < sought
+    if (isBelow === isRising) cold = middle
+    else hot = middle
+  }
+  return { ok: true, value: 2 / (cold + hot) - KELVIN }
+}
+
+/**
+ * Temperature glide: how far bubble and dew temperature lie apart at one pressure; none for a pure fluid.
+ *
+ * @param kPa  [kPa absolute]
+ * @returns [K] ≥ 0
+ */
+export function glideAt(refrigerant: string, kPa: number): Looked {
+  const bubble = temperatureAt(refrigerant, 'bubbleKpa', kPa)
+  const dew = temperatureAt(refrigerant, 'dewKpa', kPa)
+  if (!bubble.ok) return bubble
+  return dew.ok ? { ok: true, value: Math.max(0, dew.value - bubble.value) } : dew
+}
+
+/** The temperatures that the table of a refrigerant reaches. @returns [°C]; null without a table */
+export function tableRange(refrigerant: string): { lowest: number; highest: number } | null {
+  const rows = tables[refrigerant]?.rows
+  return rows ? { lowest: rows[0]?.[0] ?? 0, highest: rows.at(-1)?.[0] ?? 0 } : null
 }
 
 /** ln of a column over 1/T, ascending in 1/T, with the slope of a cubic Hermite spline at each row. */
