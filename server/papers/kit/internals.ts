@@ -1,16 +1,27 @@
 import type PDFDocument from 'pdfkit'
 
 /**
- * The few parts of pdfkit that the papers use beyond its declared types: lines are broken and set here, so
- * that a word is shaped once per document, and page numbers are filled in when the last page is known.
+ * The few parts of pdfkit and its font reader that the papers use beyond the declared types: lines are broken
+ * and set here, so that a word is shaped once per process, and page numbers are filled in at the end.
  */
+export interface Typeface {
+  unitsPerEm: number
+  layout: (text: string, features: Record<string, boolean>) => {
+    glyphs: { id: number; codePoints: number[]; advanceWidth: number }[]
+    /** [units of the font] */
+    positions: { xAdvance: number }[]
+  }
+}
+
 export interface FontInternals {
   id: string
-  /** [1/1000 of the size] */
-  ascender: number
-  descender: number
+  font: Typeface
+  /** The glyphs that this document uses, by their number in it. */
+  subset: { includeGlyph: (glyphId: number) => number }
+  /** [1/1000 of the size] by number in this document */
+  widths: number[]
+  unicode: number[][]
   ref: () => unknown
-  encode: (text: string, features?: string[]) => [string[], { xAdvance: number; advanceWidth: number; xOffset: number; yOffset: number }[]]
 }
 
 export interface PendingObject {

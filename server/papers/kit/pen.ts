@@ -1,6 +1,7 @@
 import type PDFDocument from 'pdfkit'
 import { fontFile } from './fonts'
 import { internalsOf, type DocumentInternals, type FontInternals } from './internals'
+import { shapeWord, type Glyph } from './shaper'
 import { LEADING, type TextStyle, type Weight } from './look'
 
 /** A word shaped once: its glyphs as an operand of TJ, and its width at size 1. */
@@ -11,9 +12,8 @@ interface Shaped {
 }
 
 const MOST_SHAPED = 20_000 // words kept per font and document; beyond it the store is emptied
-const FIGURES = ['tnum']
 const NUMBER = /^[\d.,−–%]+$/ // a hyphen of tabular width would tear names such as R-410A apart
-const MISSING = '0000' // the glyph of a sign that the font lacks
+const MISSING = 0 // the glyph of a sign that the font lacks
 const JOINED = /[\u00a0\u202f]/ // spaces at which no line is broken
 const UNSEEN = /[\u200b-\u200f\u202a-\u202e\u2060-\u2069\ufeff]/g // turn text around or take no room: no place in a record
 // eslint-disable-next-line no-control-regex -- control signs are what is looked for
@@ -126,16 +126,15 @@ export class Pen {
     const store = isNumber ? this.shaped.figures[style.weight] : this.shaped[style.weight]
     const known = store.get(word)
     if (known) return known
-    const [codes, positions] = this.fonts[style.weight].encode(word, isNumber ? FIGURES : undefined)
-    const glyphs: string[] = []
-    let width = 0
-    positions.forEach((position, index) => {
-      width += position.xAdvance / 1000
-      const kern = position.advanceWidth - position.xAdvance
-      glyphs.push(`<${codes[index] ?? MISSING}>${kern === 0 ? '' : ` ${round(kern)}`}`)
+    const font = this.fonts[style.weight]
+    const run = shapeWord(word, style.weight, isNumber)
+    const glyphs = run.map((glyph) => {
+      const code = codeIn(font, glyph)
+      const kern = round(glyph.advanceWidth - glyph.xAdvance)
+      return `<${code.toString(16).padStart(4, '0')}>${kern === '0' ? '' : ` ${kern}`}`
     })
+    const shaped = { glyphs: glyphs.join('').replaceAll('><', ''), width: run.reduce((sum, glyph) => sum + glyph.xAdvance, 0) / 1000, isWhole: run.every((glyph) => glyph.id !== MISSING) }
     if (store.size >= MOST_SHAPED) store.clear()
-    const shaped = { glyphs: glyphs.join('').replaceAll('><', ''), width, isWhole: !codes.includes(MISSING) }
     store.set(word, shaped)
     return shaped
   }
@@ -143,7 +142,15 @@ export class Pen {
 
 /** Text as it may stand on paper: no control signs but line breaks. */
 const clean = (text: string): string =>
-  text.toWellFormed().replace(/\r\n?|\u2028|\u2029/g, '\n').replace(CONTROL, ' ').replace(UNSEEN, '')
+  text.toWellFormed().normalize('NFC').replace(/\r\n?|\u2028|\u2029/g, '\n').replace(CONTROL, ' ').replace(UNSEEN, '')
+
+/** The number of a glyph in this document; a glyph new to it is entered with its width and what it stands for. */
+function codeIn({ subset, widths, unicode }: FontInternals, { id, advanceWidth, codePoints }: Glyph): number {
+  const code = subset.includeGlyph(id)
+  widths[code] ??= advanceWidth
+  unicode[code] ??= codePoints
+  return code
+}
 
 const inks = new Map<string, string>()
 
