@@ -108,6 +108,16 @@ describe('a session', () => {
   })
 })
 
+describe('preferences', () => {
+  it('change one by one, and a unit that nobody reads is refused', async () => {
+    const { person } = await aPersonWithPassword()
+    const { body } = await person.patch('/api/me', { preferences: { massUnit: 'lb-oz' } }).expect(200)
+    expect(body.preferences).toEqual({ massUnit: 'lb-oz', pressureUnit: 'psig', temperatureUnit: 'F', theme: 'system', locale: 'en' })
+    await person.patch('/api/me', { preferences: { massUnit: 'stone' } }).expect(422)
+    expect((await person.patch('/api/me', { name: 'New name' }).expect(200)).body).toMatchObject({ name: 'New name', preferences: { massUnit: 'lb-oz' } })
+  })
+})
+
 describe('passwords', () => {
   it('of 64 characters work; too short, too long for bcrypt, and the commonest are refused with a sentence', async () => {
     const { person } = await aPersonWithPassword()

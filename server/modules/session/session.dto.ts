@@ -33,12 +33,13 @@ export class PasswordDto {
   @Password() current: string
   @Password() next: string
 }
-export class PreferencesDto implements Preferences {
-  @OneOf(MASS_UNITS) massUnit: MassUnit
-  @OneOf(PRESSURE_UNITS) pressureUnit: Preferences['pressureUnit']
-  @OneOf(TEMPERATURE_UNITS) temperatureUnit: Preferences['temperatureUnit']
-  @OneOf(THEMES) theme: Theme
-  @OneOf(['en']) locale: string
+/** What is given changes; the rest stays. */
+export class PreferencesDto implements Partial<Preferences> {
+  @Maybe() @OneOf(MASS_UNITS) massUnit?: MassUnit
+  @Maybe() @OneOf(PRESSURE_UNITS) pressureUnit?: Preferences['pressureUnit']
+  @Maybe() @OneOf(TEMPERATURE_UNITS) temperatureUnit?: Preferences['temperatureUnit']
+  @Maybe() @OneOf(THEMES) theme?: Theme
+  @Maybe() @OneOf(['en']) locale?: string
 }
 export class MeDto {
   @Maybe() @Text(1, 120) name?: string

@@ -106,10 +106,15 @@ export async function meOf(tx: Tx, companyId: string, personId: string): Promise
 }
 
 export async function changeMe(tx: Tx, who: Actor, change: MeDto): Promise<Me> {
-  const given = Object.fromEntries(Object.entries(change).filter(([, value]) => value !== undefined))
+  const { preferences, ...own } = givenOf(change)
+  const before = (await meOf(tx, who.companyId, who.personId)).preferences
+  const given = preferences ? { ...own, preferences: { ...before, ...givenOf(preferences) } } : own
   if (Object.keys(given).length > 0) await repository.updatePerson(tx, who.companyId, who.personId, given)
   return meOf(tx, who.companyId, who.personId)
 }
+
+const givenOf = <Fields extends object>(fields: Fields): Partial<Fields> =>
+  Object.fromEntries(Object.entries(fields).filter(([, value]) => value !== undefined)) as Partial<Fields>
 
 /** @throws Problem bad-input if the current password is wrong or the next one unusable */
 export async function changePassword(tx: Tx, who: Actor, input: { current: string; next: string }, now: Date): Promise<void> {
