@@ -1,5 +1,5 @@
 import type { WireRate } from '../../../shared/api/places'
-import { addDays, daysBetween, plainDate, yearOf } from '../../../shared/dates/plain-date'
+import { addDays, addMonths, daysBetween, plainDate } from '../../../shared/dates/plain-date'
 import type { PlainDate } from '../../../shared/dates/plain-date'
 import { isNear } from '../../../shared/leak-rate/near'
 import { percent } from '../../../shared/leak-rate/percent'
@@ -24,7 +24,8 @@ export interface RateChart {
   points: RatePoint[]
   /** The threshold over time, as level pieces. */
   threshold: { fromX: number; toX: number; y: number; percent: string }[]
-  years: { x: number; year: number }[]
+  /** The first days of the months in between. */
+  months: { x: number; on: PlainDate }[]
 }
 
 const BEYOND_TIMES = 3 // thresholds; one runaway rate would press all others flat
@@ -51,7 +52,7 @@ export function rateChart(rates: readonly WireRate[], { thresholdPercent, today 
       return { rate, mark: markOf(rate), x: xOf(rate.occurredOn), y: Math.min(value / top, 1), isBeyond: value > top }
     }),
     threshold: thresholdPieces(inOrder, { thresholdPercent, xOf, top }),
-    years: yearsBetween(from, to).map((year) => ({ year, x: xOf(plainDate(`${year}-01-01`)) })),
+    months: monthsBetween(from, to).map((on) => ({ on, x: xOf(on) })),
   }
 }
 
@@ -75,5 +76,8 @@ function thresholdPieces(rates: readonly WireRate[], { thresholdPercent, xOf, to
   return pieces
 }
 
-const yearsBetween = (from: PlainDate, to: PlainDate): number[] =>
-  Array.from({ length: yearOf(to) - yearOf(from) }, (_each, index) => yearOf(from) + 1 + index)
+function monthsBetween(from: PlainDate, to: PlainDate): PlainDate[] {
+  const months: PlainDate[] = []
+  for (let on = addMonths(plainDate(`${from.slice(0, 7)}-01`), 1); on <= to; on = addMonths(on, 1)) months.push(on)
+  return months
+}
