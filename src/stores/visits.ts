@@ -1,4 +1,5 @@
 import { defineStore } from 'pinia'
+import type { PlainDate } from '../../shared/dates/plain-date'
 import * as api from '../api/visits.api'
 import { useSessionStore } from './session'
 
@@ -10,5 +11,17 @@ export const useVisitsStore = defineStore('visits', () => {
     const { rows } = await api.listVisits({ siteId, limit: 20 })
     return rows.find((visit) => visit.personId === session.me?.id && visit.visitedOn === visitedOn)?.id ?? null
   }
-  return { mine, list: api.listVisits, create: api.createVisit }
+
+  /** The sites where the person at the screen was last, the latest first. */
+  async function mySites(most: number): Promise<{ siteId: string; siteName: string; visitedOn: PlainDate }[]> {
+    const session = useSessionStore()
+    const { rows } = await api.listVisits({ search: session.me?.name, limit: 60 })
+    const bySite = new Map<string, (typeof rows)[number]>()
+    for (const visit of rows) {
+      if (visit.personId === session.me?.id && !bySite.has(visit.siteId)) bySite.set(visit.siteId, visit)
+    }
+    return [...bySite.values()].slice(0, most)
+  }
+
+  return { mine, mySites, list: api.listVisits, create: api.createVisit }
 })
