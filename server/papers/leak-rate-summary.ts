@@ -143,9 +143,15 @@ const shapeOf = (additions: readonly SummaryAddition[]): Shape => {
   return rated.length > 0 ? 'below' : 'none'
 }
 
+/** The addition with the highest rate; one that is measured against a threshold goes before one that is not. */
 const highestOf = (additions: readonly SummaryAddition[]): SummaryAddition | null =>
-  additions.filter((addition) => addition.rate !== null)
+  measuredFirst(additions.filter((addition) => addition.rate !== null))
     .reduce<SummaryAddition | null>((highest, addition) => (highest?.rate && addition.rate && highest.rate.greaterThanOrEqualTo(addition.rate) ? highest : addition), null)
+
+const measuredFirst = (rated: readonly SummaryAddition[]): readonly SummaryAddition[] => {
+  const measured = rated.filter((addition) => addition.threshold !== null)
+  return measured.length > 0 ? measured : rated
+}
 
 const massOrDash = (words: Words, masses: readonly { massKg: Mass }[]): string => (masses.length > 0 ? words.mass(sumMass(masses.map((each) => each.massKg))) : '–')
 
@@ -166,7 +172,7 @@ async function drawGlance(sheet: Sheet, words: Words, { circuits }: LeakRateSumm
         { title: words.text('summary.recovered'), unit, width: { points: 54 }, align: 'right' },
         { title: words.text('summary.highest'), unit: words.text('unit.percent'), width: { points: 54 }, align: 'right' },
         { title: words.text('rules.threshold'), unit: words.text('unit.percent'), width: { points: 52 }, align: 'right' },
-        { title: words.text('summary.result'), width: { points: 66 } },
+        { title: words.text('summary.result'), width: { points: 76 } },
       ],
       rows: [...circuits.map((circuit) => glanceRow(words, circuit)), ...totalRows(words, circuits)],
     })
@@ -183,9 +189,9 @@ function glanceRow(words: Words, circuit: SummaryCircuit): Row {
       { text: `${circuit.systemTag} · ${circuit.name}`, style: STYLE.cellStrong }, circuit.refrigerant,
       fullCharge ? words.mass(fullCharge.massKg) : words.text('notRecorded'),
       massOrDash(words, circuit.additions), massOrDash(words, circuit.removals.filter(({ kind }) => kind === 'recovery')),
-      highest?.rate ? words.percent(highest.rate, highest.threshold) : '–',
-      highest?.threshold ? words.percent(highest.threshold) : '–',
-      { text: words.text(`standing.${shape}`), shape, style: shape === 'over' ? STYLE.cellStrong : STYLE.cell },
+      highest?.rate ? words.rate(highest.rate, highest.threshold) : '–',
+      highest?.threshold ? words.threshold(highest.threshold) : '–',
+      { text: words.text(highest && !highest.threshold ? 'standing.noThreshold' : `standing.${shape}`), shape, style: shape === 'over' ? STYLE.cellStrong : STYLE.cell },
     ],
   }
 }
@@ -233,8 +239,8 @@ function fullChargeLine(words: Words, { fullCharges }: SummaryCircuit): string {
 
 function drawHighest(sheet: Sheet, words: Words, highest: SummaryAddition, shape: Shape): void {
   if (!highest.rate || !highest.threshold) return
-  const rate = words.percent(highest.rate, highest.threshold)
-  const threshold = words.percent(highest.threshold)
+  const rate = words.rate(highest.rate, highest.threshold)
+  const threshold = words.threshold(highest.threshold)
   const params = { rate, threshold, date: words.date(highest.occurredOn), standing: words.text(`standing.${shape}`) }
   drawBeam(sheet, {
     rate: highest.rate, threshold: highest.threshold, standing: shape,
@@ -283,7 +289,7 @@ async function drawAdditions(sheet: Sheet, words: Words, { method }: LeakRateSum
       number('summary.amount', unit, 41), number('summary.counted', unit, 41),
       number(method === 'rolling' ? 'summary.inWindow' : 'summary.forLeak', unit, 44), number('summary.days', words.text('unit.days'), 30),
       number('fullCharge', unit, 43), number('summary.rate', words.text('unit.percent'), 45), number('rules.threshold', words.text('unit.percent'), 45),
-      { title: words.text('summary.result'), width: { points: 68 } },
+      { title: words.text('summary.result'), width: { points: 76 } },
       { title: words.text('summary.notes'), width: { points: 25 } },
     ],
     rows: additions.map((addition) => additionRow(words, addition, notes)),
@@ -299,7 +305,7 @@ function additionRow(words: Words, addition: SummaryAddition, notes: Notes): Row
     cells: [
       words.date(addition.occurredOn), addition.personName, words.mass(massKg), words.mass(countedKg),
       rate ? words.mass(addedKg) : '–', days === null ? '–' : String(days), fullChargeKg ? words.mass(fullChargeKg) : '–',
-      rate ? { text: words.percent(rate, threshold), style: STYLE.cellStrong } : '–', threshold ? words.percent(threshold) : '–',
+      rate ? { text: words.rate(rate, threshold), style: STYLE.cellStrong } : '–', threshold ? words.threshold(threshold) : '–',
       { text: words.text(exempt ? 'standing.exempt' : threshold ? `standing.${shape}` : 'standing.noThreshold'), shape, style: isAbove ? STYLE.cellStrong : STYLE.cell },
       [...(exempt ? [notes.letterOf(`exempt.${exempt}`)] : []), ...basis.map((code) => notes.letterOf(`basis.${code}`))].join(' '),
     ],

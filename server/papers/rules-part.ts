@@ -1,4 +1,5 @@
 import type { WirePackDecision, WireThreshold } from '../../shared/api/places'
+import { plainDate } from '../../shared/dates/plain-date'
 import { percent } from '../../shared/leak-rate/percent'
 import { kg } from '../../shared/mass/mass'
 import { STYLE } from './kit/look'
@@ -31,7 +32,7 @@ export async function drawRules(sheet: Sheet, words: Words, thresholds: readonly
       rows: distinct(thresholds).map((threshold) => ({
         cells: [
           words.common(`rules.packs.${threshold.packId}.title`), words.common(`rules.categories.${threshold.category}`),
-          words.text('rules.above', { percent: words.percent(percent(threshold.percent)) }),
+          words.text('rules.above', { percent: words.threshold(percent(threshold.percent)) }),
           threshold.cite, words.common(`rules.basis.${threshold.basis}`), words.date(threshold.checkedOn),
         ],
       })),
@@ -45,8 +46,13 @@ export async function drawRules(sheet: Sheet, words: Words, thresholds: readonly
 export const decisionsText = (words: Words, packs: readonly WirePackDecision[]): string =>
   packs.map(({ packId, applies, reasons }) => words.text('rules.decision', {
     pack: words.common(`rules.packs.${packId}.title`), applies: words.common(`rules.applies.${applies}`),
-    reasons: reasons.map(({ code, params }) => words.common(`rules.reasons.${code}`, params.chargeKg ? { ...params, charge: words.massInBoth(kg(params.chargeKg)) } : params)).join(' '),
+    reasons: reasons.map(({ code, params }) => words.common(`rules.reasons.${code}`, saidParams(words, params))).join(' '),
   })).join('\n')
+
+function saidParams(words: Words, params: Record<string, string>): Record<string, string> {
+  const { chargeKg, from } = params
+  return { ...params, ...(chargeKg ? { charge: words.massInBoth(kg(chargeKg)) } : {}), ...(from ? { from: words.date(plainDate(from)) } : {}) }
+}
 
 function distinct(thresholds: readonly ThresholdOnPaper[]): ThresholdOnPaper[] {
   const byKey = new Map(thresholds.map((threshold) =>

@@ -176,7 +176,7 @@ const TICKET_HEAD = 42 // [pt]
 
 /** One entry as a weigh ticket: what it was and how much on top, everything the law asks for below. */
 function drawEntry(sheet: Sheet, words: Words, record: ServiceRecord, circuit: RecordCircuit, entry: RecordEntry): void {
-  sheet.need(TICKET_HEAD + 120)
+  sheet.need(TICKET_HEAD + 160) // the most that an entry with short texts takes
   const top = sheet.y
   const left = sheet.left + TICKET_PAD
   const right = sheet.right - TICKET_PAD
@@ -248,12 +248,12 @@ function drawRate(sheet: Sheet, words: Words, record: ServiceRecord, circuit: Re
   const y = sheet.y
   sheet.ornament((document) => drawShape(document, shape, x, y + sheet.pen.lineHeight(STYLE.strong) / 2))
   say(words.text(rate.threshold ? 'record.rate' : 'record.rateAlone', {
-    rate: words.percent(rate.rate, rate.threshold), threshold: rate.threshold ? words.percent(rate.threshold) : '',
+    rate: words.rate(rate.rate, rate.threshold), threshold: rate.threshold ? words.threshold(rate.threshold) : '',
     standing: words.text(rate.isAbove ? 'record.isAbove' : 'record.isNotAbove'),
   }), STYLE.strong, 10)
   say(words.text(`record.computed.${record.method}`, {
     method: words.text(`method.${record.method}.name`), added: words.mass(rate.addedKg), fullCharge: words.mass(rate.fullChargeKg), days: rate.days ?? 0,
-    unit: words.text(`unit.short.${words.massUnit}`), rate: words.percent(rate.rate, rate.threshold), refrigerant: circuit.refrigerant,
+    unit: words.text(`unit.short.${words.massUnit}`), rate: words.rate(rate.rate, rate.threshold), refrigerant: circuit.refrigerant,
   }), STYLE.small, 10)
   for (const code of rate.basis) say(words.text(`basis.${code}`), STYLE.small, 10)
 }

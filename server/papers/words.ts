@@ -22,8 +22,10 @@ export interface Words {
   massInBoth: (mass: Mass) => string
   /** Exact kilograms, and pounds that are exact where they can be. */
   massExact: (mass: Mass) => string
-  /** A rate or threshold without its sign. */
-  percent: (percent: Percent, against?: Percent | null) => string
+  /** A rate without its sign, to two digits; more where it would look equal to its threshold and is not. */
+  rate: (rate: Percent, threshold: Percent | null) => string
+  /** A threshold without its sign, to as many digits as it has. */
+  threshold: (threshold: Percent) => string
   date: (date: PlainDate) => string
   /** An instant with its zone. */
   instant: (instant: Date, timeZone: string) => string
@@ -44,7 +46,8 @@ export function wordsFor(locale: string, jurisdiction: string): Words {
     mass: (mass) => number(massUnit === 'lb' ? pounds(mass) : mass, 2),
     massInBoth: (mass) => (massUnit === 'lb' ? text('unit.both', { first: lb(mass), second: kg(mass) }) : text('unit.both', { first: kg(mass), second: lb(mass) })),
     massExact: (mass) => exactMass(text, number, mass),
-    percent: (percent, against = null) => percentText(text, number, percent, against),
+    rate: (rate, threshold) => rateText(text, number, rate, threshold),
+    threshold: (threshold) => number(threshold, 0, MOST_RATE_DIGITS),
     date: (date) => dates.format(new Date(`${date}T00:00:00Z`)),
     instant: (instant, timeZone) => new Intl.DateTimeFormat(locale, {
       year: 'numeric', month: 'short', day: 'numeric', hour: '2-digit', minute: '2-digit', timeZone, timeZoneName: 'short',
@@ -74,13 +77,12 @@ function exactMass(text: Words['text'], number: Numbers, mass: Mass): string {
     : text('unit.exactKilograms', { pounds: number(pounds, 2, 4), kilograms, exact: toKgText(mass) })
 }
 
-/** Two digits, and more where two would make a rate look equal to a threshold that it is above or below. */
-function percentText(text: Words['text'], number: Numbers, percent: Percent, against: Percent | null): string {
-  if (against === null) return number(percent, percent.isInteger() ? 0 : 2, 2)
-  const looksEqual = (digits: number): boolean => !percent.equals(against) && percent.toDecimalPlaces(digits, Exact.ROUND_HALF_UP).equals(against)
+function rateText(text: Words['text'], number: Numbers, rate: Percent, threshold: Percent | null): string {
+  const looksEqual = (digits: number): boolean =>
+    threshold !== null && !rate.equals(threshold) && rate.toDecimalPlaces(digits, Exact.ROUND_HALF_UP).equals(threshold)
   let digits = 2
   while (digits < MOST_RATE_DIGITS && looksEqual(digits)) digits += 1
-  const shown = number(percent, 2, digits)
-  if (!looksEqual(digits)) return shown
-  return text(percent.greaterThan(against) ? 'unit.justAbove' : 'unit.justBelow', { percent: shown })
+  const shown = number(rate, 2, digits)
+  if (threshold === null || !looksEqual(digits)) return shown
+  return text(rate.greaterThan(threshold) ? 'unit.justAbove' : 'unit.justBelow', { percent: shown })
 }

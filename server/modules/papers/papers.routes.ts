@@ -1,23 +1,15 @@
-import type { YearlyCylinderRow } from '../../../shared/api/cylinders'
-import { isAfter } from '../../../shared/dates/plain-date'
 import type { Actor } from '../../actor'
-import type { Tx } from '../../database'
 import type { House } from '../../house'
 import { say } from '../../language'
-import { cylinderLedgerCells } from '../../papers/cylinder-ledger'
-import { entryCells, type EntryRow } from '../../papers/entries'
-import { leakRateSummary, type Making } from '../../papers/leak-rate-summary'
+import { leakRateSummary } from '../../papers/leak-rate-summary'
 import { serviceRecord } from '../../papers/service-record'
-import { badField } from '../../problem'
 import { route, type Route } from '../../route'
-import { rowsByCursor } from './cursor'
-import entriesSql from './entries.sql?raw'
+import { entriesOf, yearlyCylinders } from './exports.service'
+import { makingOf } from './making.service'
 import { LeakRateSummaryQuery, PeriodQuery, ServiceRecordQuery, YearQuery } from './papers.dto'
-import { companyName } from './places.repository'
 import { recordOf } from './record.service'
 import { fileNameOf, sendCsv, sendPdf } from './send'
 import { summaryOf } from './summary.service'
-import yearlyCylindersSql from './yearly-cylinders.sql?raw'
 
 const PAPERS_PER_MINUTE = 60
 const EXPORTS_PER_MINUTE = 20
@@ -42,24 +34,14 @@ export const papersRoutes = (house: House): Route[] => [
   }),
   route({
     method: 'get', path: '/api/papers/cylinder-ledger.csv', may: 'export.read', summary: 'Yearly ledger of all cylinders, as CSV', query: YearQuery, perMinute: EXPORTS_PER_MINUTE,
-    handle: ({ who, query: { year }, response }) => house.database.inCompany(who, (tx) => {
-      const rows = rowsByCursor<YearlyCylinderRow>(tx, yearlyCylindersSql, [who.companyId, `${year}-01-01`, `${year}-12-31`])
-      return sendCsv(response, cylinderLedgerCells(rows, who.locale), fileNameOf([nameOf(who, 'cylinders'), String(year)], 'csv'))
-    }),
+    handle: ({ who, query: { year }, response }) => house.database.inCompany(who, (tx) =>
+      sendCsv(response, yearlyCylinders(tx, who, year), fileNameOf([nameOf(who, 'cylinders'), String(year)], 'csv'))),
   }),
   route({
     method: 'get', path: '/api/papers/entries.csv', may: 'export.read', summary: 'Every entry of the ledger, as CSV', query: PeriodQuery, perMinute: EXPORTS_PER_MINUTE,
-    handle: ({ who, query: { from, to }, response }) => {
-      if (from && to && isAfter(from, to)) throw badField('to', 'dateOrder')
-      return house.database.inCompany(who, (tx) => {
-        const rows = rowsByCursor<EntryRow>(tx, entriesSql, [who.companyId, from ?? null, to ?? null], { asArrays: true })
-        return sendCsv(response, entryCells(rows, who.locale), fileNameOf([nameOf(who, 'entries'), from ?? '', to ?? ''], 'csv'))
-      })
-    },
+    handle: ({ who, query, response }) => house.database.inCompany(who, (tx) =>
+      sendCsv(response, entriesOf(tx, who, query), fileNameOf([nameOf(who, 'entries'), query.from ?? '', query.to ?? ''], 'csv'))),
   }),
 ]
 
 const nameOf = (who: Actor, paper: 'summary' | 'record' | 'cylinders' | 'entries'): string => say(who.locale, `papers.fileName.${paper}`)
-
-const makingOf = async (tx: Tx, who: Actor, madeAt: Date): Promise<Making> =>
-  ({ locale: who.locale, personName: who.name, companyName: await companyName(tx, who.companyId), madeAt })

@@ -140,6 +140,9 @@ function markOf(row: repository.MarkRow, parts: Parts): RecordMark {
 
 /** The component and the position on it, as far as they are known. */
 function placeOf({ component_kind, component_name }: { component_kind: string | null; component_name: string | null }, position: string | null, locale: string): string | null {
-  const component = component_kind && say(locale, 'papers.place', { kind: say(locale, `papers.component.${component_kind}`), name: component_name ?? '' }).trim()
+  const kind = component_kind && say(locale, `papers.component.${component_kind}`)
+  const name = component_name ?? ''
+  // most people name a coil "Condenser coil 2": the kind is then said already
+  const component = kind && (name.toLowerCase().includes(kind.toLowerCase()) ? name : say(locale, 'papers.place', { kind, name }).trim())
   return [component, position].filter(Boolean).join(', ') || null
 }

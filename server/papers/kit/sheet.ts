@@ -64,6 +64,7 @@ export class Sheet {
 
   /** Runs work whose blocks belong together in the structure of the document. */
   async within<Result>(tag: string, work: () => Promise<Result> | Result): Promise<Result> {
+    await this.breathe()
     const element = this.open(tag)
     try {
       return await work()
