@@ -109,7 +109,7 @@ async function makePlaces(tx: Tx, officer: Actor, { customers, technicians, toda
         }, now)
         circuits.push({ story: part.story, circuit: {
           id, siteId, customerId, refrigerant: part.refrigerant, category, fullChargeLb: part.fullChargeLb, isRolling: site.leakRateMethod === 'rolling', commissionedOn, technician,
-          unit: UNITS[index % UNITS.length] ?? 'lb', bookLb: 0, lastAddedOn: commissionedOn, lastAddedBefore: commissionedOn, lastPostingIds: [], leaks: new Map(), components: new Map(),
+          unit: UNITS[index % UNITS.length] ?? 'lb', bookLb: 0, lastAddedOn: commissionedOn, lastAddedBefore: commissionedOn, lastPostings: [], leaks: new Map(), components: new Map(),
         } })
       }
     }

@@ -2,7 +2,7 @@
 export type Step = { daysAgo: number } & (
   | { do: 'opening' }
   | { do: 'installation' }
-  | { do: 'charge'; share?: number; pounds?: number; purpose?: 'leak' | 'seasonal'; leak?: string; isComplete?: boolean; hour?: number }
+  | { do: 'charge'; share?: number; pounds?: number; purpose?: 'leak' | 'seasonal'; leak?: string; isComplete?: boolean; isOfOneCylinder?: boolean; hour?: number }
   | { do: 'recover'; pounds?: number; purpose: 'repair' | 'seasonal' | 'retirement'; isComplete?: boolean }
   | { do: 'lose-all' }
   | { do: 'reverse-last'; reason: string }
@@ -46,7 +46,7 @@ export const STORIES: Record<string, readonly Step[]> = {
   ],
   seasonal: [opening, { do: 'recover', daysAgo: 236, pounds: 12, purpose: 'seasonal' }, { do: 'charge', daysAgo: 61, pounds: 14, purpose: 'seasonal' }],
   reversed: [
-    opening, { do: 'charge', daysAgo: 400, share: 0.4 }, { do: 'charge', daysAgo: 74, share: 2.4 },
+    opening, { do: 'charge', daysAgo: 400, share: 0.4 }, { do: 'charge', daysAgo: 74, pounds: 26, isOfOneCylinder: true },
     { do: 'reverse-last', daysAgo: 73, reason: 'Weighed on circuit 2, entered on circuit 1' }, { do: 'charge', daysAgo: 72, share: 0.3 },
   ],
   returned: [

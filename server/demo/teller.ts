@@ -31,8 +31,8 @@ export interface DemoCircuit {
   unit: MassUnit
   bookLb: number
   lastAddedOn: PlainDate
-  /** The postings of the latest charge: one per cylinder that it took. */
-  lastPostingIds: string[]
+  /** The postings of the latest charge: one per cylinder that it took, with what came out of it. */
+  lastPostings: { id: string; cylinder: StockCylinder; pounds: number }[]
   lastAddedBefore: PlainDate
   leaks: Map<string, string>
   components: Map<string, string>
@@ -60,8 +60,10 @@ export class Teller {
         circuit.bookLb = 0
         return
       case 'reverse-last':
-        for (const reversesId of circuit.lastPostingIds)
-          await this.post(this.officer, on, MORNING, { kind: 'reversal', refrigerant: circuit.refrigerant, pounds: circuit.fullChargeLb, reversesId, reason: step.reason })
+        for (const { id, cylinder, pounds } of circuit.lastPostings) {
+          await this.post(this.officer, on, MORNING, { kind: 'reversal', refrigerant: circuit.refrigerant, pounds, reversesId: id, reason: step.reason })
+          cylinder.contentLb += pounds
+        }
         circuit.lastAddedOn = circuit.lastAddedBefore
         return
       case 'status': {
@@ -111,18 +113,19 @@ export class Teller {
     const days = circuit.isRolling ? 365 : Math.min(365, Math.max(1, daysBetween(circuit.lastAddedOn, on)))
     const allowed = THRESHOLD[circuit.category] * circuit.fullChargeLb * days / 365
     let left = toQuarters(step.pounds ?? allowed * (step.share ?? 0))
-    circuit.lastPostingIds = []
+    circuit.lastPostings = []
     while (left > 0) {
-      const cylinder = await this.filledCylinder(circuit, on)
+      const cylinder = await this.filledCylinder(circuit, on, step.isOfOneCylinder ? left : 0)
       const taken = Math.min(left, cylinder.contentLb)
       left -= taken
-      await this.post(circuit.technician, on, step.hour ?? NOON, {
+      const id = await this.post(circuit.technician, on, step.hour ?? NOON, {
         kind: 'charge', circuitId: circuit.id, cylinderId: cylinder.id, refrigerant: circuit.refrigerant, pounds: taken, purpose: step.purpose ?? 'leak',
         leakId: step.leak ? (circuit.leaks.get(step.leak) ?? null) : null, isComplete: left === 0 && step.isComplete !== false,
         entered: weighing(circuit.unit, cylinder.tareLb + cylinder.contentLb, taken), part: step.leak === 'coil' ? 'Condenser coil' : 'Circuit',
         workDone: step.purpose === 'seasonal' ? 'Charge for the season' : 'Charge weighed in', circuit,
       })
       cylinder.contentLb -= taken
+      circuit.lastPostings.push({ id, cylinder, pounds: taken })
     }
     circuit.bookLb = circuit.fullChargeLb
     circuit.lastAddedBefore = circuit.lastAddedOn
@@ -146,20 +149,20 @@ export class Teller {
     if (step.isComplete) circuit.bookLb = 0
   }
 
-  /** A cylinder with gas of the circuit's refrigerant: one that is at hand, else one that the supplier fills that morning. */
-  private async filledCylinder({ refrigerant, technician }: DemoCircuit, on: PlainDate): Promise<StockCylinder> {
+  /** A cylinder with gas of the circuit's refrigerant, some pounds at least: one that is at hand, else one that the supplier fills that morning. */
+  private async filledCylinder({ refrigerant, technician }: DemoCircuit, on: PlainDate, leastLb: number): Promise<StockCylinder> {
     const ofIt = this.stock.service.filter((each) => each.refrigerant === refrigerant)
-    const filled = ofIt.find((each) => each.contentLb > 0)
+    const filled = ofIt.find((each) => each.contentLb > 0 && each.contentLb >= leastLb)
     if (filled) return filled
-    const cylinder = ofIt[0] ?? await this.stock.make(refrigerant, 'service', technician.personId)
+    const cylinder = ofIt.find((each) => each.contentLb === 0) ?? await this.stock.make(refrigerant, 'service', technician.personId)
     const pounds = toQuarters(cylinder.limitLb * 0.9)
     await this.post(this.officer, on, MORNING, { kind: 'purchase', cylinderId: cylinder.id, partnerId: this.supplierId, refrigerant, pounds, entered: weighing('lb', cylinder.tareLb, -pounds) })
     cylinder.contentLb = pounds
     return cylinder
   }
 
-  /** Posts in pounds; what concerns a circuit belongs to a visit of that day. */
-  async post(who: Actor, on: PlainDate, hour: number, given: Partial<PostingDraft> & Pick<PostingDraft, 'kind' | 'refrigerant'> & { pounds: number; circuit?: DemoCircuit }): Promise<void> {
+  /** Posts in pounds; what concerns a circuit belongs to a visit of that day. @returns the id of the posting */
+  async post(who: Actor, on: PlainDate, hour: number, given: Partial<PostingDraft> & Pick<PostingDraft, 'kind' | 'refrigerant'> & { pounds: number; circuit?: DemoCircuit }): Promise<string> {
     const { pounds, circuit, ...rest } = given
     const minute = (this.count * 7) % 60
     const id = uuid()
@@ -168,8 +171,8 @@ export class Teller {
       cylinderId: null, toCylinderId: null, circuitId: null, partnerId: null, visitId: circuit ? await this.visit(circuit, on) : null, leakId: null, purpose: null, isComplete: true,
       part: null, workDone: null, note: null, reversesId: null, reason: null, ...rest,
     }, this.now)
-    if (circuit && rest.kind === 'charge') circuit.lastPostingIds.push(id)
     this.count += 1
+    return id
   }
 
   private async visit(circuit: DemoCircuit, on: PlainDate): Promise<string> {

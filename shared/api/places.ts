@@ -259,4 +259,8 @@ export interface WireOverview {
 
 /** One call at one site by one technician. */
 export interface VisitDraft { id: string; siteId: string; visitedOn: PlainDate; remark: string | null }
-export interface WireVisit extends VisitDraft { siteName: string; customerName: string; personId: string; personName: string; postingCount: number; may: string[] }
+export interface WireVisit extends VisitDraft { siteName: string; customerName: string; personId: string; personName: string; postingCount: number; calculations: WireCalculation[]; may: string[] }
+
+/** The result of a calculator that was put into the record of a visit, as it was shown. */
+export interface CalculationDraft { id: string; calculator: string; title: string; lines: { label: string; value: string }[] }
+export interface WireCalculation extends CalculationDraft { personName: string; recordedAt: string }

@@ -486,7 +486,7 @@ export const en = {
   site: {
     list: { title: 'Sites', text: 'Where the systems stand, with the rules that hold there.', search: 'Site, customer, city', emptyTitle: 'No site yet', emptyText: 'A site belongs to a customer and holds the systems.' },
     one: 'Site', name: 'Name', customer: 'Customer', street: 'Street', city: 'City', region: 'State or region', postalCode: 'Postal code', country: 'Country', countryHint: 'Two letters, such as US.',
-    timeZone: 'Time zone', timeZoneHint: 'Dates of work and deadlines go by it.', elevation: 'Elevation', elevationHint: 'Metres above sea level: gauges read against the local air pressure.',
+    timeZone: 'Time zone', timeZoneHint: 'Dates of work and deadlines go by it.', elevation: 'Elevation', metres: '{elevation} m', elevationHint: 'Metres above sea level: gauges read against the local air pressure.',
     jurisdiction: 'Jurisdiction', jurisdictions: { US: 'United States', 'US-CA': 'United States, California', EU: 'European Union', GB: 'Great Britain' },
     method: 'Leak rate by', methods: { annualizing: 'Annualizing method', rolling: 'Rolling average method' }, methodHint: 'One method for all appliances of a facility (40 CFR 82.152).',
     packs: 'Rule packs', packsHint: 'Which rules are watched here. Local regulation and licensed practice decide.', noPacks: 'No rule pack is switched on: no threshold is watched here.',

@@ -23,5 +23,5 @@ export const useVisitsStore = defineStore('visits', () => {
     return [...bySite.values()].slice(0, most)
   }
 
-  return { mine, mySites, list: api.listVisits, create: api.createVisit }
+  return { mine, mySites, list: api.listVisits, create: api.createVisit, attach: api.attachCalculation }
 })

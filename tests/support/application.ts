@@ -17,7 +17,7 @@ export interface Application {
   close: () => Promise<void>
 }
 
-const CLIENT = resolve('.build/client')
+const CLIENT = resolve(process.env.WEIGHBACK_TEST_BUILD ?? '.build', 'client')
 
 export async function anApplication(): Promise<Application> {
   if (!existsSync(CLIENT)) throw new Error('The client is not built: run the tests by `npm test`, which builds it.')

@@ -1,11 +1,10 @@
 import { Answer, route, type Route } from '../../route'
 import type { House } from '../../house'
-import { notFound, Problem } from '../../problem'
+import { Problem } from '../../problem'
 import { IdParams } from '../../fields'
 import { checkLedger } from './check.service'
 import { PostingDraftDto, PostingsQuery } from './ledger.dto'
 import * as ledger from './ledger.service'
-import { listPostings, postingById } from './postings.repository'
 
 const CREATED = 201
 const OK = 200
@@ -19,21 +18,17 @@ export const ledgerRoutes = (house: House): Route[] => [
       if (!key) throw new Problem('idempotency-key-missing')
       if (key.replaceAll('"', '') !== body.id) throw new Problem('posting-id-reused')
       const posted = await house.database.inCompany(who, (tx) => ledger.post(tx, who, body, house.now()))
-      const wire = await house.database.inCompany(who, (tx) => postingById(tx, who, posted.id))
+      const wire = await house.database.inCompany(who, (tx) => ledger.getPosting(tx, who, posted.id))
       return new Answer(posted.isNew ? CREATED : OK, wire)
     },
   }),
   route({
     method: 'get', path: '/api/postings', may: 'posting.read', summary: 'Postings, newest first', query: PostingsQuery,
-    handle: ({ who, query }) => house.database.inCompany(who, (tx) => listPostings(tx, who, query)),
+    handle: ({ who, query }) => house.database.inCompany(who, (tx) => ledger.listPostings(tx, who, query)),
   }),
   route({
     method: 'get', path: '/api/postings/:id', may: 'posting.read', summary: 'One posting with its entries', params: IdParams, problems: ['not-found'],
-    handle: async ({ who, params }) => {
-      const posting = await house.database.inCompany(who, (tx) => postingById(tx, who, params.id))
-      if (!posting) throw notFound('posting')
-      return posting
-    },
+    handle: ({ who, params }) => house.database.inCompany(who, (tx) => ledger.getPosting(tx, who, params.id)),
   }),
   route({
     method: 'get', path: '/api/ledger/check', may: 'ledger.check', summary: 'Recompute the whole ledger and name every fault', perMinute: 6,

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import type { PostingDraft, PostingKind } from '../../../shared/api/ledger'
+import type { PostingDraft, PostingKind, WirePosting } from '../../../shared/api/ledger'
 import { localDateOf, type PlainDate } from '../../../shared/dates/plain-date'
 import { contentText } from '../../../shared/mass/content'
 import { contentsAfter, receivingCylinder } from '../../../shared/mass/contents'
@@ -8,8 +8,9 @@ import { buildPosting } from '../../../shared/mass/postings'
 import { refusePosting } from '../../../shared/mass/refusals'
 import { may, type Actor } from '../../actor'
 import type { Tx } from '../../database'
-import { Problem, type FieldFault } from '../../problem'
+import { notFound, Problem, type FieldFault } from '../../problem'
 import * as standing from '../standing/standing.service'
+import { listPostings, postingById } from './postings.repository'
 import { problemOfRefusal } from './refusal-problems'
 import * as repository from './ledger.repository'
 import { statesOf } from './states'
@@ -62,6 +63,14 @@ export async function post(tx: Tx, who: Actor, sent: PostingDraft, now: Date): P
   if (row.circuit_id) await standing.reviewCircuits(tx, who.companyId, [row.circuit_id])
   return { id: draft.id, isNew: true }
 }
+
+/** @throws Problem not-found */
+export async function getPosting(tx: Tx, who: Actor, id: string): Promise<WirePosting> {
+  const posting = await postingById(tx, who, id)
+  if (!posting) throw notFound('posting')
+  return posting
+}
+export { listPostings }
 
 function demandKind(who: Actor, kind: PostingKind): void {
   const isHeld = kind === 'reversal' ? may(who, 'posting.reverse') : STOCK_KINDS.includes(kind) ? may(who, 'posting.stock') : may(who, 'posting.create')

@@ -195,3 +195,7 @@ export const acceptInvitation = (house: House, token: string, input: { name: str
     await repository.updatePerson(tx, link.companyId, link.personId, { name: input.name })
     return startSession(house, tx, { companyId: link.companyId, id: link.personId }, input.userAgent)
   })
+
+/** Signs a person out everywhere, or everywhere but here. */
+export const endSessions = (tx: Tx, companyId: string, personId: string, exceptId: string | null, now: Date): Promise<void> =>
+  repository.endSessionsOf(tx, companyId, personId, exceptId, now)

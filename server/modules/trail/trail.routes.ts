@@ -1,7 +1,7 @@
 import { route, type Route } from '../../route'
 import type { House } from '../../house'
 import { TrailQuery } from './trail.dto'
-import { listTrail } from './trail.repository'
+import { listTrail } from './trail.service'
 
 export const trailRoutes = ({ database }: House): Route[] => [
   route({

@@ -2,6 +2,8 @@ import { v7 as uuid } from 'uuid'
 import type { Actor } from '../../actor'
 import type { Tx } from '../../database'
 
+export { listTrail } from './trail.repository'
+
 export interface TrailNote {
   action: string
   subject: string

@@ -11,7 +11,11 @@ const SORTS: Record<string, SortKey> = { date: { sql: 'v.visited_on', type: 'dat
 const SELECT = (key: string): string => `
   select v.id, v.site_id as "siteId", s.name as "siteName", c.name as "customerName", v.visited_on as "visitedOn", v.remark, v.person_id as "personId",
          p.name as "personName", ${key} as page_key,
-         (select count(*)::int from posting o where o.company_id = v.company_id and o.visit_id = v.id) as "postingCount"
+         (select count(*)::int from posting o where o.company_id = v.company_id and o.visit_id = v.id) as "postingCount",
+         (select coalesce(json_agg(json_build_object('id', k.id, 'calculator', k.calculator, 'title', k.title, 'lines', k.lines, 'personName', q.name, 'recordedAt', k.recorded_at)
+                   order by k.recorded_at), '[]')
+            from visit_calculation k join person q on q.company_id = k.company_id and q.id = k.person_id
+           where k.company_id = v.company_id and k.visit_id = v.id) as calculations
     from visit v
     join site s on s.company_id = v.company_id and s.id = v.site_id
     join customer c on c.company_id = v.company_id and c.id = v.customer_id
@@ -43,3 +47,9 @@ export async function visitById(tx: Tx, who: Actor, id: string): Promise<WireVis
 }
 
 const wire = ({ page_key: _key, ...row }: Row, who: Actor): WireVisit => ({ ...row, may: held(who, ['visit.update']) })
+
+export const hasCalculation = async (tx: Tx, companyId: string, id: string): Promise<boolean> =>
+  (await tx.query('select from visit_calculation where company_id = $1 and id = $2', [companyId, id]) as unknown[]).length > 0
+
+export const customerOfVisit = async (tx: Tx, companyId: string, visitId: string): Promise<string | null> =>
+  (await tx.query('select customer_id from visit where company_id = $1 and id = $2', [companyId, visitId]) as { customer_id: string }[])[0]?.customer_id ?? null

@@ -1,11 +1,11 @@
-import type { VisitDraft, WireVisit } from '../../../shared/api/places'
+import type { CalculationDraft, VisitDraft, WireVisit } from '../../../shared/api/places'
 import type { Actor } from '../../actor'
 import type { Tx } from '../../database'
 import { badField, notFound } from '../../problem'
 import { insertRow } from '../../versioned'
 import { getSite } from '../sites/sites.service'
 import * as trail from '../trail/trail.service'
-import { visitById } from './visits.repository'
+import { customerOfVisit, hasCalculation, visitById } from './visits.repository'
 
 export { listVisits } from './visits.repository'
 
@@ -26,4 +26,16 @@ export async function createVisit(tx: Tx, who: Actor, draft: VisitDraft): Promis
   })
   await trail.record(tx, who, { action: 'create', subject: 'visit', subjectId: draft.id, subjectName: site.name, after: draft })
   return getVisit(tx, who, draft.id)
+}
+
+/** Puts the result of a calculator into a visit; the same id again changes nothing. @throws Problem not-found */
+export async function attachCalculation(tx: Tx, who: Actor, visitId: string, draft: CalculationDraft): Promise<WireVisit> {
+  const visit = await getVisit(tx, who, visitId)
+  if (await hasCalculation(tx, who.companyId, draft.id)) return visit
+  const { id, calculator, title, lines } = draft
+  await insertRow(tx, 'visit_calculation', {
+    company_id: who.companyId, id, customer_id: await customerOfVisit(tx, who.companyId, visitId), visit_id: visitId, calculator, title, lines: JSON.stringify(lines), person_id: who.personId,
+  })
+  await trail.record(tx, who, { action: 'attach', subject: 'visit', subjectId: visitId, subjectName: visit.siteName, after: draft })
+  return getVisit(tx, who, visitId)
 }
