@@ -12,7 +12,7 @@ import { refusePosting, type Refusal } from '../../shared/mass/refusals'
 import type { PostingStates } from '../../shared/mass/states'
 import { circuitStateOf, cylinderStateOf } from '../../shared/mass/states-from-wire'
 import { postingWarnings } from '../../shared/mass/warnings'
-import { netOf } from '../../shared/units/mass-units'
+import { netOf, type NetReading } from '../../shared/units/mass-units'
 import { isRefusedWith } from '../api/problem'
 import { useLedgerStore } from '../stores/ledger'
 import { useVisitsStore } from '../stores/visits'
@@ -76,11 +76,17 @@ export function useWeighIn({ circuit: current, massUnit }: { circuit: () => Wire
   function faults(): FieldProblem[] {
     const found: FieldProblem[] = []
     if (!isLoss.value && !cylinder.value) found.push({ field: 'cylinderId', message: t('weighIn.cylinder.missing') })
-    if (!net.value.ok) found.push({ field: net.value.field, message: t(`units.fault.${net.value.code}`) })
+    if (!net.value.ok) found.push(...readingFaults(net.value))
     else if (net.value.mass.isZero()) found.push({ field: 'amount', message: t('weighIn.loss.empty') })
     if (!entry.occurredOn) found.push({ field: 'occurredOn', message: t('weighIn.work.dateMissing') })
     if (!isTime(entry.time)) found.push({ field: 'time', message: t('weighIn.work.timeWrong') })
     return found
+  }
+
+  /** Named by its field, since the summary on top stands far from it; both readings where none was entered. */
+  function readingFaults({ field, code }: Extract<NetReading, { ok: false }>): FieldProblem[] {
+    const fields = field === 'amount' && !entry.isNet && !isLoss.value ? (['before', 'after'] as const) : [field]
+    return fields.map((each) => ({ field: each, message: `${t(`weighIn.scale.${each}`)}: ${t(`units.fault.${code}`)}` }))
   }
 
   /** Looks at everything that can be seen from here. @returns whether it may be reviewed */
@@ -116,7 +122,8 @@ export function useWeighIn({ circuit: current, massUnit }: { circuit: () => Wire
 
   watch(() => entry.kind, (kind) => {
     if (!PURPOSES_OF_KIND[kind].includes(entry.purpose)) entry.purpose = PURPOSES_OF_KIND[kind][0] ?? 'leak'
-    entry.isComplete = kind === 'recovery'
+    // That a circuit is full or empty is for the person to say: the book follows it.
+    entry.isComplete = false
     form.fieldProblems.value = []
   })
   watch(() => entry.occurredOn, () => (entry.visitId = null))

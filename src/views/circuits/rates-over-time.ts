@@ -6,7 +6,7 @@ import { percent } from '../../../shared/leak-rate/percent'
 
 export type RateMark = 'above' | 'near' | 'below' | 'exempt'
 
-/** One addition on the chart; shares are 0 at the left and at the foot, 1 at the right and at the top. */
+/** One day with additions on the chart, by its highest rate; shares are 0 at the left and at the foot, 1 at the right and at the top. */
 export interface RatePoint {
   rate: WireRate
   mark: RateMark
@@ -47,13 +47,23 @@ export function rateChart(rates: readonly WireRate[], { thresholdPercent, today 
   const top = limit > 0 ? Math.max(limit * 1.5, Math.min(highest * 1.15, limit * BEYOND_TIMES)) : Math.max(highest * 1.2, 1)
   return {
     from, to, top,
-    points: inOrder.map((rate) => {
+    points: highestOfEachDay(inOrder).map((rate) => {
       const value = Number(rate.ratePercent ?? 0)
       return { rate, mark: markOf(rate), x: xOf(rate.occurredOn), y: Math.min(value / top, 1), isBeyond: value > top }
     }),
     threshold: thresholdPieces(inOrder, { thresholdPercent, xOf, top }),
     months: monthsBetween(from, to).map((on) => ({ on, x: xOf(on) })),
   }
+}
+
+/** Additions of one day are one leak: what they came to in the end is what counts, and the table has each. */
+function highestOfEachDay(rates: readonly WireRate[]): WireRate[] {
+  const byDay = new Map<PlainDate, WireRate>()
+  for (const rate of rates) {
+    const other = byDay.get(rate.occurredOn)
+    if (!other || Number(rate.ratePercent ?? -1) >= Number(other.ratePercent ?? -1)) byDay.set(rate.occurredOn, rate)
+  }
+  return [...byDay.values()]
 }
 
 function markOf({ ratePercent, thresholdPercent, isAbove }: WireRate): RateMark {
