@@ -565,6 +565,30 @@ export const en = {
     co2e: { title: 'CO2e', text: 'What a mass of refrigerant weighs as carbon dioxide.', mass: 'Mass', gwp: 'GWP, 100 years', tonnes: 'CO2 equivalent', unknown: 'A component has no GWP in this set: no figure is made up.', formula: 'mass [kg] × GWP / 1000 = t CO2e; a blend’s GWP is the mean by mass', source: 'IPCC AR4, 100 years, the values of 40 CFR part 84 appendix A and of EU Annex I for HFCs; from memory: check against the current text.' },
     units: { title: 'Units', text: 'The same quantity in other units.', kind: 'Quantity', kinds: { mass: 'Mass', pressure: 'Pressure', temperature: 'Temperature', length: 'Length' }, value: 'Value', unit: 'In', formula: '1 lb = 0.45359237 kg; 1 psi = 6.894757293168 kPa; 1 in = 25.4 mm; °F = °C × 9/5 + 32', source: 'Exact by definition (international yard and pound, 1959); µm Hg and in Hg by conventional mercury.' },
   },
+  paper: {
+    title: 'Papers', text: 'What the owner must get and what the auditor takes away.', textOwner: 'What was done on your systems, and how they stand.', open: 'Open the PDF', csv: 'Download the CSV', from: 'From', to: 'To',
+    record: {
+      title: 'Service records', text: 'One per visit: what was added and removed, by whom, with the leak rate that follows (40 CFR 82.157(l); from memory: check against the current text).', site: 'Site', date: 'Date', person: 'Technician', paper: 'Paper', open: 'Service record (PDF)', search: 'Site, customer, technician',
+      emptyTitle: 'No visit yet', emptyText: 'A visit begins with the first weigh-in at a site.',
+    },
+    summary: { title: 'Leak-rate summary', text: 'All circuits of a site for a period: additions, removals, rates and thresholds.', site: 'Site' },
+    cylinders: { title: 'Yearly cylinder ledger', text: 'Per refrigerant and cylinder: opening stock and what came in is what went out and closing stock, to the last digit.', year: 'Year' },
+    entries: { title: 'All entries', text: 'Every line of the double entry for a period, with who, when and the hash.' },
+  },
+  check: {
+    title: 'Check and trail', text: 'Whether the ledger is whole, and who changed what beside it.', ledger: 'Check the ledger', ledgerText: 'Recomputes the hash of every posting, every seal over the one before it, all sums to zero and every balance.', run: 'Check now',
+    whole: 'The ledger is whole.', broken: 'One fault was found. | {count} faults were found.', postings: 'Postings', sealed: 'of them sealed', waiting: 'waiting for the next seal', seals: 'Seals', last: 'Last seal', at: 'Checked',
+    seal: 'Seal {number}', posting: 'Posting {id}', account: 'Account {id}',
+    faults: {
+      'content-changed': 'A posting no longer fits the hash of what was sent.', 'posting-missing': 'A sealed posting is gone.', 'posting-unknown': 'A posting stands where none was sealed.', 'seal-broken': 'A seal does not fit what it covers.', unbalanced: 'Entries do not sum to zero.',
+      'balance-differs': 'A kept balance differs from its entries.', 'entry-differs': 'Entries differ from the posting.', 'seal-missing': 'A seal of the chain is missing.',
+    },
+  },
+  trail: {
+    title: 'Trail', text: 'Postings stand in the ledger; everything else that was changed stands here.', subject: 'What', at: 'When', person: 'Who', change: 'Change', search: 'Name, person, action', all: 'Everything', emptyTitle: 'Nothing yet', emptyText: 'The first change of a record is noted here.', fields: 'one field | {count} fields', to: 'to',
+    subjects: { customer: 'Customer', site: 'Site', system: 'System', circuit: 'Circuit', component: 'Component', 'watch-mark': 'Watch mark', leak: 'Leak', verification: 'Verification test', cylinder: 'Cylinder', partner: 'Trade partner', person: 'Person', visit: 'Visit' },
+    actions: { create: 'added', change: 'changed', invite: 'invited', disable: 'shut', enable: 'opened again', 'change-password': 'password changed', 'revise-full-charge': 'full charge revised', resolve: 'resolved', repair: 'repaired', attach: 'calculation attached' },
+  },
   papers: {
     page: 'Page {page} of {pages}',
     period: '{from} to {to}',
