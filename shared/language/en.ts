@@ -79,7 +79,7 @@ export const en = {
     'posting-id-reused': { title: 'This posting was sent before with other figures', detail: 'The first one stands in the ledger unchanged. To correct it, reverse it and post anew.' },
     unavailable: { title: 'The ledger is out of reach just now', detail: 'Nothing was lost. Try again in a few seconds.' },
     internal: { title: 'A mistake of ours', detail: 'Nothing was saved. Try again; if it stays, tell us the number {id}.' },
-    'wrong-refrigerant': { title: 'Not the same refrigerant', detail: '{where} holds {holds}, and {offered} was to go in or come out. Choose a cylinder with {holds}, or check the circuit.' },
+    'wrong-refrigerant': { title: 'Not the same refrigerant', detail: '{where} holds {holds}, and {offered} was to go in or come out. Cylinder and circuit must hold the same refrigerant: check both.' },
     'test-date-passed': { title: 'The cylinder is past its test date', detail: 'Cylinder {cylinder} was due for its test on {testDueOn} and may not be filled. Use another one; what is in it may still be used up or returned.' },
     'fill-limit-exceeded': { title: 'The cylinder would be overfilled', detail: 'Cylinder {cylinder} may hold {limit} of this refrigerant (80 % of its volume). {room} still fit: put the rest in another cylinder.' },
     'disposable-not-refillable': { title: 'This cylinder may not be refilled', detail: 'Cylinder {cylinder} is a disposable one (DOT 39) and is never refilled. Use a refillable or recovery cylinder.' },
