@@ -920,7 +920,7 @@ export const en = {
   today: {
     title: 'Today',
     find: 'Find a circuit',
-    findHint: 'Tag, site, customer or refrigerant',
+    findHint: 'Tag, site or customer',
     findNone: 'No circuit fits these words.',
     findNoneText: 'Try the tag on the unit, or a part of the site name.',
     weigh: 'Weigh in',
@@ -1118,7 +1118,7 @@ export const en = {
     toReversal: 'See the reversal',
     toOriginal: 'See what it takes back',
     page: {
-      title: '{kind}, {date}', entries: 'Double entry', entriesText: 'Each entry goes out of one account into another; the sum is zero.', account: 'Account', into: 'In', out: 'Out', sum: 'Sum', balanced: 'balanced', facts: 'What was recorded', occurred: 'Happened', recorded: 'Recorded', person: 'By', circuit: 'Circuit', site: 'Site', cylinder: 'Cylinder',
+      title: '{kind}, {date}', entries: 'Double entry', entriesText: 'Each entry goes out of one account into another; the sum is zero.', account: 'Account', into: 'In', out: 'Out', sum: 'Sum', balanced: 'balanced', facts: 'What was recorded', occurred: 'Date at the site', instant: 'Happened', recorded: 'Recorded', person: 'By', circuit: 'Circuit', site: 'Site', cylinder: 'Cylinder',
       toCylinder: 'Into cylinder', partner: 'Partner', purpose: 'Why', mass: 'Exact mass', entered: 'As entered', before: 'before {value}', after: 'after {value}', amount: 'net {value}', noReadings: 'no reading: by the book', complete: 'Left the circuit', full: 'at its full charge', empty: 'empty',
       notComplete: 'as it was, or not said', part: 'Part', work: 'Work done', note: 'Note', reason: 'Reason', hash: 'Content hash', hashText: 'Covers everything the person sent; the sealed chain covers the hash.', id: 'Number', record: 'Service record (PDF)', ledger: 'Ledger', exact: '{kg} kg exactly',
     },

@@ -103,17 +103,33 @@ export function useStockPosting({ kind, massUnit }: { kind: StockKind; massUnit:
     }
   }
 
+  /** The words beside the field, for the summary on top that stands far from it. */
+  function nameOf(field: 'cylinderId' | 'toCylinderId' | 'circuitId' | 'partnerId'): string {
+    switch (field) {
+      case 'cylinderId': return t(entry.kind === 'transfer' ? 'posting.form.from' : 'posting.form.cylinder')
+      case 'toCylinderId': return t('posting.form.to')
+      case 'circuitId': return t('posting.form.circuit')
+      case 'partnerId': return partnerKind.value ? t(`posting.form.partner.${partnerKind.value}`) : ''
+      default: return field satisfies never
+    }
+  }
+
   function faults(): FieldProblem[] {
     const found: FieldProblem[] = []
     for (const field of accounts.value) {
-      if (field !== 'reversesId' && named(field) === null) found.push({ field, message: t('posting.form.needed') })
+      if (field !== 'reversesId' && named(field) === null) found.push({ field, message: `${nameOf(field)}: ${t('posting.form.needed')}` })
     }
     if (entry.kind === 'transfer' && cylinder.value && cylinder.value.id === toCylinder.value?.id) found.push({ field: 'toCylinderId', message: t('validation.posting.same-cylinder') })
-    if (!net.value.ok) found.push({ field: net.value.field, message: t(`units.fault.${net.value.code}`) })
+    if (!net.value.ok) found.push(...readingFaults(net.value))
     else if (isZero(net.value.mass)) found.push({ field: entry.kind === 'variance' ? 'after' : 'amount', message: t(entry.kind === 'variance' ? 'posting.form.agrees' : 'validation.posting.mass-zero') })
     if (entry.kind === 'variance' && !entry.note?.trim()) found.push({ field: 'note', message: t('posting.form.noteMissing') })
     if (!entry.occurredOn) found.push({ field: 'occurredOn', message: t('common.form.fieldRequired') })
     return found
+  }
+
+  function readingFaults({ field, code }: Extract<NetReading, { ok: false }>): FieldProblem[] {
+    const fields = field === 'amount' && entry.way === 'readings' ? (['before', 'after'] as const) : [field]
+    return fields.map((each) => ({ field: each, message: `${t(entry.kind === 'variance' ? 'posting.form.gross' : `posting.form.${each}`)}: ${t(`units.fault.${code}`)}` }))
   }
 
   async function send(): Promise<void> {
