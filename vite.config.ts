@@ -4,6 +4,7 @@ import { basename } from 'node:path'
 import vue from '@vitejs/plugin-vue'
 import { transformWithOxc } from 'vite'
 import type { Plugin } from 'vite'
+import { VitePWA } from 'vite-plugin-pwa'
 import { defineConfig } from 'vitest/config'
 
 /** The server itself and each command of server/cli, built side by side. */
@@ -26,7 +27,7 @@ const LEFT_OUT = {
 }
 
 export default defineConfig(({ command, isSsrBuild }) => ({
-  plugins: [vue(), languageParts()],
+  plugins: [vue(), languageParts(), command === 'build' && !isSsrBuild ? [houseIcon(), installable()] : []],
   define: command === 'build' && !isSsrBuild ? LEFT_OUT : {},
   // Packages stay in node_modules for the server: only our own files are bundled, with their decorators' metadata.
   build: isSsrBuild
@@ -62,3 +63,36 @@ function languageParts(): Plugin {
     },
   }
 }
+
+/** The mark of the house under a name that the manifest can give. */
+function houseIcon(): Plugin {
+  return {
+    name: 'house-icon',
+    async generateBundle() {
+      this.emitFile({ type: 'asset', fileName: 'icon.svg', source: await readFile('src/assets/mark.svg') })
+    },
+  }
+}
+
+/**
+ * Makes the client installable and its files usable without a line. The page itself is not among the files laid
+ * up in advance: it carries the nonce of its own content policy, so the last one that the server gave is kept whole.
+ */
+const installable = () => VitePWA({
+  injectRegister: null,
+  registerType: 'autoUpdate',
+  manifest: {
+    name: 'Weighback', short_name: 'Weighback', description: 'Every pound accounted for.', start_url: '/', display: 'standalone',
+    background_color: '#f4ede0', theme_color: '#12392f', icons: [{ src: '/icon.svg', sizes: 'any', type: 'image/svg+xml', purpose: 'any' }],
+  },
+  workbox: {
+    globPatterns: ['**/*.{js,css,woff2,svg}'],
+    navigateFallback: null,
+    cleanupOutdatedCaches: true,
+    runtimeCaching: [{
+      urlPattern: ({ request, url }) => request.mode === 'navigate' && !url.pathname.startsWith('/api/'),
+      handler: 'NetworkFirst',
+      options: { cacheName: 'page', networkTimeoutSeconds: 4, plugins: [{ cacheKeyWillBeUsed: () => Promise.resolve('/') }] },
+    }],
+  },
+})

@@ -3,6 +3,7 @@ import { createApp } from 'vue'
 import App from './App.vue'
 import { applyStoredTheme } from './composables/useTheme'
 import { DEFAULT_LOCALE, completeLanguage, i18n, showLanguage } from './language'
+import { installWorker } from './offline/worker'
 import { router } from './router/router'
 import './theme/fonts.css'
 import './theme/tokens.css'
@@ -23,3 +24,4 @@ router.beforeResolve(async (to) => {
 })
 
 app.use(router).mount('#app')
+installWorker()

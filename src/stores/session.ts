@@ -3,9 +3,10 @@ import { defineStore } from 'pinia'
 import type { Permission } from '../../shared/access/permissions'
 import { mayRole } from '../../shared/access/permissions'
 import type { Me, Preferences, SignIn } from '../../shared/api/people'
-import { RequestFailure, toProblem } from '../api/problem'
+import { toProblem } from '../api/problem'
 import type { Problem } from '../api/problem'
 import * as api from '../api/session.api'
+import { forgetPerson, rememberedPerson, rememberPerson } from '../offline/remembered-person'
 
 export const DEFAULT_PREFERENCES: Preferences = { massUnit: 'lb', pressureUnit: 'psig', temperatureUnit: 'F', theme: 'system', locale: 'en' }
 
@@ -26,8 +27,12 @@ export const useSessionStore = defineStore('session', () => {
     try {
       enter(await api.getMe())
     } catch (thrown) {
-      if (thrown instanceof RequestFailure && thrown.problem.kind === 'signed-out') leave()
-      else problem.value = toProblem(thrown)
+      const failure = toProblem(thrown)
+      // Without a line the person of last time goes on; the server asks again at the first request that reaches it.
+      const remembered = failure.kind === 'offline' ? rememberedPerson() : null
+      if (remembered) enter(remembered)
+      else if (failure.kind === 'signed-out') leave()
+      else problem.value = failure
     }
   }
 
@@ -63,12 +68,14 @@ export const useSessionStore = defineStore('session', () => {
 
   function enter(person: Me): void {
     me.value = person
+    rememberPerson(person)
     state.value = 'in'
     problem.value = null
   }
 
   function leave(): void {
     me.value = null
+    forgetPerson()
     state.value = 'out'
   }
 

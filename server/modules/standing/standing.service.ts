@@ -61,8 +61,12 @@ function rateToStore(record: CircuitRecord, addition: RatedAddition, position: n
   }
 }
 
+/** A retired circuit is rated no more; its rates stay in its own history. */
+const RETIRED: repository.StandingToStore = { standing: 'none', ratePercent: null, ratedOn: null, thresholdPercent: null, severity: -1, rateTenThousandths: -1 }
+
 /** Where a circuit stands: by the rate of its latest rated addition against the threshold of that day. */
 function standingOf(record: CircuitRecord, rated: readonly RatedAddition[]): repository.StandingToStore {
+  if (record.status === 'retired') return RETIRED
   const last = rated.findLast((addition) => addition.rate !== null)
   const rate = last?.rate ?? null
   const threshold = last ? thresholdOn(record, last.occurredOn) : null
