@@ -95,6 +95,8 @@ export interface ServiceRecord {
   people: { name: string; certificateNumber: string | null; certificateType: string | null }[]
   remark: string | null
   circuits: RecordCircuit[]
+  /** Results of the bench that were put into the visit, as they were shown then. */
+  calculations: { title: string; lines: { label: string; value: string }[]; personName: string }[]
 }
 
 /** The record of a service that its person hands to the owner or operator, 40 CFR 82.157(l). */
@@ -117,11 +119,22 @@ export function serviceRecord(record: ServiceRecord, making: Making): { sheet: S
       drawParties(sheet, words, record, making)
       if (record.circuits.length === 0) sheet.text(words.text('record.noWork'), STYLE.body, { after: 8 })
       for (const circuit of record.circuits) await sheet.within('Sect', () => drawCircuit(sheet, words, record, circuit))
+      if (record.calculations.length > 0) await sheet.within('Sect', () => drawCalculations(sheet, words, record.calculations))
       await drawRules(sheet, words, record.circuits.flatMap((circuit) => circuit.thresholds))
       await sheet.within('Sect', () => drawHandover(sheet, words))
       sheet.finish()
     },
   }
+}
+
+function drawCalculations(sheet: Sheet, words: Words, calculations: ServiceRecord['calculations']): void {
+  sheet.begin(120)
+  sheet.heading(2, words.text('record.calculations'), STYLE.heading)
+  for (const { title, lines, personName } of calculations) {
+    sheet.heading(3, `${title}, ${personName}`, STYLE.subheading, 60)
+    drawFacts(sheet, [...lines])
+  }
+  sheet.space(8)
 }
 
 function drawParties(sheet: Sheet, words: Words, { site, owner, people, remark }: ServiceRecord, { companyName }: Making): void {

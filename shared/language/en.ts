@@ -717,6 +717,7 @@ export const en = {
       location: 'Location of the appliance',
       servicedBy: 'Serviced by',
       remark: 'Remark on the visit',
+      calculations: 'Calculations of this visit',
       noCertificate: 'certificate: not recorded',
       certificate: 'certificate {number}, {type}',
       certificateNumber: 'certificate {number}',

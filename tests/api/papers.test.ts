@@ -5,6 +5,7 @@ import type { PostingDraft } from '../../shared/api/ledger'
 import { REFRIGERANTS } from '../../shared/refrigerants/catalogue'
 import { textCell } from '../../server/papers/csv'
 import { Sheet } from '../../server/papers/kit/sheet'
+import { aSite } from '../support/builders'
 import { aDraft } from '../support/drafts'
 import { asBuffer, pdfInfo, pdfText } from '../support/paper-text'
 import { aCircuitRow, aCylinderRow, aPartnerRow, aWorld, type World } from '../support/rows'
@@ -310,5 +311,21 @@ describe('the ledger as CSV', () => {
     await one.auditor.get('/api/papers/cylinder-ledger.csv').expect(422)
     await one.auditor.get('/api/papers/cylinder-ledger.csv?year=20x6').expect(422)
     await one.auditor.get('/api/papers/entries.csv?from=2026-02-01&to=2026-01-01').expect(422)
+  })
+})
+
+describe('a calculation that was put into a visit', () => {
+  it('stands in the service record as it was shown, once, and only in a visit of this company', async () => {
+    const company = await aCompany(server)
+    const site = await aSite(company.officer)
+    const visit = { id: uuid(), siteId: site.id, visitedOn: '2026-11-20', remark: null }
+    await company.technician.post('/api/visits', visit).expect(201)
+    const calculation = { id: uuid(), calculator: 'standing', title: 'Standing pressure test', lines: [{ label: 'Expected by temperature alone', value: '388.4 psig' }] }
+    await company.technician.post(`/api/visits/${visit.id}/calculations`, calculation).expect(201)
+    const { body } = await company.technician.post(`/api/visits/${visit.id}/calculations`, calculation).expect(201)
+    expect(body.calculations).toHaveLength(1)
+    const { body: pdf } = await asBuffer(company.officer.get(`/api/papers/service-record.pdf?visitId=${visit.id}`).expect(200))
+    expect(pdfText(pdf)).toContain('388.4 psig')
+    await (await aCompany(server)).technician.post(`/api/visits/${visit.id}/calculations`, { ...calculation, id: uuid() }).expect(404)
   })
 })

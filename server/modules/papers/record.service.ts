@@ -8,6 +8,7 @@ import { badField, notFound } from '../../problem'
 import * as standing from '../standing/standing.service'
 import type { ServiceRecordQuery } from './papers.dto'
 import { circuitRows, fullChargeRows, siteRow, type CircuitRow } from './places.repository'
+import { getVisit } from '../visits/visits.service'
 import * as repository from './record.repository'
 import { fullChargeOf, groupedBy, ownerOf, rateOf, siteOf, type RateRow } from './wire'
 
@@ -17,6 +18,7 @@ interface Occasion {
   servicedOn: PlainDate
   remark: string | null
   entries: repository.EntryRow[]
+  calculations: ServiceRecord['calculations']
   /** Null: every circuit of the site on which something was done on those days. */
   circuitIds: string[] | null
   personIds: string[]
@@ -44,7 +46,7 @@ export async function recordOf(tx: Tx, who: Actor, query: ServiceRecordQuery): P
   const people = await repository.personRows(tx, who.companyId, [...new Set([...doers, ...marks.map((row) => row.person_id)])])
   const parts = { entries: occasion.entries, leaks, tests, marks, people, locale: who.locale, isOwner: who.customerIds !== null }
   return {
-    site: siteOf(site), owner: ownerOf(site), method: site.leak_rate_method, servicedOn: occasion.servicedOn, remark: occasion.remark,
+    site: siteOf(site), owner: ownerOf(site), method: site.leak_rate_method, servicedOn: occasion.servicedOn, remark: occasion.remark, calculations: occasion.calculations,
     people: people.filter((person) => doers.includes(person.id))
       .map((person) => ({ name: person.name, certificateNumber: person.certificate_number, certificateType: person.certificate_type })),
     circuits: await circuitsOf(tx, who.companyId, await circuitRows(tx, who.companyId, site.id, circuitIds), occasion.servicedOn, parts),
@@ -58,14 +60,14 @@ async function occasionOf(tx: Tx, who: Actor, { visitId, postingId }: ServiceRec
     if (!visit) throw notFound('visit')
     return {
       siteId: visit.site_id, servicedOn: plainDate(visit.visited_on), remark: visit.remark, entries: await repository.entryRows(tx, who, { visitId }),
-      circuitIds: null, personIds: [visit.person_id],
+      circuitIds: null, personIds: [visit.person_id], calculations: (await getVisit(tx, who, visitId)).calculations,
     }
   }
   if (!postingId) throw badField('visitId', 'needed')
   const entries = await repository.entryRows(tx, who, { postingId })
   const [entry] = entries
   if (!entry) throw notFound('posting')
-  return { siteId: entry.site_id, servicedOn: plainDate(entry.occurred_on), remark: null, entries, circuitIds: [entry.circuit_id], personIds: [] }
+  return { siteId: entry.site_id, servicedOn: plainDate(entry.occurred_on), remark: null, entries, circuitIds: [entry.circuit_id], personIds: [], calculations: [] }
 }
 
 /** The rows of all circuits of a record, to be told apart by circuit. */
