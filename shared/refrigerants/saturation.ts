@@ -16,7 +16,8 @@ export type Looked = { ok: true; value: number } | { ok: false; code: 'outside-t
 const COLUMN = { bubbleKpa: 1, dewKpa: 2, liquidDensity: 3, vapourDensity: 4 } as const
 export type SaturationColumn = keyof typeof COLUMN
 
-interface Curve { x: number[]; y: number[]; slope: number[] }
+/** ln of a column over 1/T [1/K], ascending in 1/T, with the slope of a cubic Hermite spline at each row. */
+export interface Curve { x: number[]; y: number[]; slope: number[] }
 const curves = new Map<string, Curve>()
 
 /**
@@ -79,20 +80,27 @@ export function tableRange(refrigerant: string): { lowest: number; highest: numb
   return rows ? { lowest: rows[0]?.[0] ?? 0, highest: rows.at(-1)?.[0] ?? 0 } : null
 }
 
-/** ln of a column over 1/T, ascending in 1/T, with the slope of a cubic Hermite spline at each row. */
 function curveOf(refrigerant: string, column: SaturationColumn): Curve | null {
   const key = `${refrigerant} ${column}`
   const known = curves.get(key)
   if (known) return known
   const table = tables[refrigerant]
   if (!table) return null
-  const rows = [...table.rows].reverse()
-  const x = rows.map((row) => 1 / ((row[0] ?? 0) + KELVIN))
-  const y = rows.map((row) => Math.log(row[COLUMN[column]] ?? 0))
-  const curve = { x, y, slope: x.map((_at, index) => slopeAt(x, y, index)) }
+  const curve = curveThrough(table.rows.map((row) => [row[0] ?? 0, row[COLUMN[column]] ?? 0] as const))
   curves.set(key, curve)
   return curve
 }
+
+/** The curve through rows of [°C, value above zero], ascending in temperature; three rows at least. */
+export function curveThrough(rows: readonly (readonly [celsius: number, value: number])[]): Curve {
+  const falling = [...rows].reverse()
+  const x = falling.map(([celsius]) => 1 / (celsius + KELVIN))
+  const y = falling.map(([, value]) => Math.log(value))
+  return { x, y, slope: x.map((_at, index) => slopeAt(x, y, index)) }
+}
+
+/** The value of a curve at a temperature within its rows. @param celsius [°C] */
+export const readCurve = (curve: Curve, celsius: number): number => Math.exp(interpolate(curve, 1 / (celsius + KELVIN)))
 
 /** The slope of the parabola through a row and its neighbours. */
 function slopeAt(x: number[], y: number[], index: number): number {
