@@ -11,7 +11,7 @@ const stopJobs = startJobs(house)
 
 server.on('error', (error: NodeJS.ErrnoException) => {
   if (error.code === 'EADDRINUSE') house.log.fatal(`Port ${config.port} is taken by another program. Stop that one, or start with another: WEIGHBACK_PORT=${config.port + 1} npm start`)
-  else house.log.fatal({ error }, 'The server cannot listen.')
+  else house.log.fatal({ err: error }, 'The server cannot listen.')
   process.exit(1)
 })
 server.listen(config.port, config.host, () => house.log.info(`Weighback serves ${config.baseUrl}`))

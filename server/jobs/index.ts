@@ -7,7 +7,7 @@ const EVERY_MS = 3000
 export function startJobs(house: House): () => Promise<void> {
   let running = Promise.resolve()
   const timer = setInterval(() => {
-    running = running.then(() => sealPostings(house)).catch((error: unknown) => house.log.error({ error }, 'sealing failed, tried again later'))
+    running = running.then(() => sealPostings(house)).catch((error: unknown) => house.log.error({ err: error }, 'sealing failed, tried again later'))
   }, EVERY_MS)
   return () => {
     clearInterval(timer)

@@ -53,8 +53,8 @@ function bodyProblem(error: unknown): Problem | null {
 export const writeProblems = (house: House): ErrorRequestHandler => (error, request, response, next) => {
   const id = randomUUID().slice(0, 8)
   const expected = problemFrom(error)
-  if (!expected) house.log.error({ error, id, path: request.path }, 'mistake of ours')
-  else if (expected.status >= 500) house.log.warn({ error, id, path: request.path }, expected.code)
+  if (!expected) house.log.error({ err: error, id, path: request.path }, 'mistake of ours')
+  else if (expected.status >= 500) house.log.warn({ err: error, id, path: request.path }, expected.code)
   if (response.headersSent) {
     next(error)
     return

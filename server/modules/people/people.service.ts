@@ -72,7 +72,7 @@ export async function invite(house: House, who: Actor, person: WirePerson): Prom
   }))
   const letter = invitationLetter('en', person.email, `${house.config.baseUrl}/invitation/${link}`, { name: person.name, company, inviter: who.name })
   return house.mailer.send(letter).then(() => true, (error: unknown) => {
-    house.log.error({ error }, 'invitation not sent')
+    house.log.error({ err: error }, 'invitation not sent')
     return false
   })
 }

@@ -67,7 +67,7 @@ export const sessionRoutes = (house: House): Route[] => {
     route({
       method: 'post', path: '/api/password/forgot', may: 'anyone', summary: 'Ask for a reset link by mail', body: ForgotDto, perMinute: 5,
       handle: ({ body }) => {
-        session.forgot(house, body.email).catch((error: unknown) => house.log.error({ error }, 'reset letter not sent'))
+        session.forgot(house, body.email).catch((error: unknown) => house.log.error({ err: error }, 'reset letter not sent'))
         return new Answer(202)
       },
     }),
