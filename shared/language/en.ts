@@ -355,6 +355,7 @@ export const en = {
     starting: 'Weighing in …',
     groups: { work: 'Work', stock: 'Stock', company: 'Company' },
     nav: {
+      packs: 'Rule packs',
       today: 'Today',
       overview: 'Overview',
       customers: 'Customers',
@@ -588,6 +589,12 @@ export const en = {
     title: 'Trail', text: 'Postings stand in the ledger; everything else that was changed stands here.', subject: 'What', at: 'When', person: 'Who', change: 'Change', search: 'Name, person, action', all: 'Everything', emptyTitle: 'Nothing yet', emptyText: 'The first change of a record is noted here.', fields: 'one field | {count} fields', to: 'to',
     subjects: { customer: 'Customer', site: 'Site', system: 'System', circuit: 'Circuit', component: 'Component', 'watch-mark': 'Watch mark', leak: 'Leak', verification: 'Verification test', cylinder: 'Cylinder', partner: 'Trade partner', person: 'Person', visit: 'Visit' },
     actions: { create: 'added', change: 'changed', invite: 'invited', disable: 'shut', enable: 'opened again', 'change-password': 'password changed', 'revise-full-charge': 'full charge revised', resolve: 'resolved', repair: 'repaired', attach: 'calculation attached' },
+  },
+  pack: {
+    title: 'Rule packs', text: 'The law as Weighback computes it: every value with its source, since when it holds and when it was last checked. A site switches packs on.',
+    scope: 'To whom it applies', duties: 'What runs, and until when', above: 'Above it, not at it.', everyCategory: 'every category', from: 'from {charge}', below: 'below {charge}', days: 'one day | {count} days', daysWithShutdown: '{days} days; {longer} where an industrial process must be shut down', years: 'one year | {count} years',
+    nextYearOn: 'on {month}/{day} of the next year', schedules: { quarterly: 'every three months', 'calendar-year': 'once a calendar year' }, source: '{cite}, {basis}; in force from {from}, checked {checkedOn}',
+    triggers: { 'above-threshold': 'when an addition’s rate is above the threshold', repaired: 'when a leak is repaired', 'initial-test-passed': 'when the initial test is passed', 'follow-up-failed': 'when the follow-up test fails, or the rate stays above', 'plan-made': 'when the plan is made', 'chronic-leak': 'when losses reach 125 % of the full charge in a calendar year' },
   },
   papers: {
     page: 'Page {page} of {pages}',

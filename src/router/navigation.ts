@@ -26,6 +26,7 @@ export const NAVIGATION: readonly NavigationEntry[] = [
   { name: 'postings', icon: 'postings', group: 'stock', path: '/postings', permission: 'posting.read' },
   { name: 'partners', icon: 'partners', group: 'stock', path: '/partners', permission: 'partner.read', roles: ['officer', 'auditor', 'administrator'] },
   { name: 'check', icon: 'check', group: 'stock', path: '/check', permission: 'ledger.check' },
+  { name: 'packs', icon: 'papers', group: 'company', path: '/packs', permission: 'pack.read', roles: ['officer', 'auditor', 'administrator'] },
   { name: 'customers', icon: 'customers', group: 'company', path: '/customers', permission: 'customer.read', roles: ['officer', 'auditor', 'administrator'] },
   { name: 'people', icon: 'people', group: 'company', path: '/people', permission: 'person.read' },
 ]
