@@ -4,7 +4,7 @@
 begin;
 select id from bench_account where id in (:a, :b) order by id for no key update;
 with p as (insert into bench_posting (account_a, account_b, mass) values (:a, :b, 0.005) returning id)
-insert into bench_entry (posting_id, line, account_id, mass) select id, 1, :a, -0.005 from p union all select id, 2, :b, 0.005 from p;
+insert into bench_entry (posting_id, line, account_id, mass) select p.id, v.line, v.account_id, v.mass from p, (values (1, (:a)::int, -0.005), (2, (:b)::int, 0.005)) as v (line, account_id, mass);
 update bench_account set mass = mass - 0.005 where id = :a;
 update bench_account set mass = mass + 0.005 where id = :b;
 commit;

@@ -7,11 +7,12 @@ import { PostingDraftDto, PostingsQuery } from './ledger.dto'
 import * as ledger from './ledger.service'
 
 const CREATED = 201
+const POSTINGS_PER_MINUTE = 20_000 // a phone that was away sends all it has at once
 const OK = 200
 
 export const ledgerRoutes = (house: House): Route[] => [
   route({
-    method: 'post', path: '/api/postings', may: 'posting.create', summary: 'Post a weighing once; a repeat gets the first answer', body: PostingDraftDto,
+    method: 'post', path: '/api/postings', may: 'posting.create', summary: 'Post a weighing once; a repeat gets the first answer', body: PostingDraftDto, perMinute: POSTINGS_PER_MINUTE,
     problems: ['posting-id-reused', 'idempotency-key-missing', 'wrong-refrigerant', 'fill-limit-exceeded', 'test-date-passed', 'cylinder-negative'],
     handle: async ({ who, body, request }) => {
       const key = request.get('idempotency-key')
