@@ -23,10 +23,12 @@ const check = (name: string, key: string, passes: (value: unknown) => boolean): 
 /** Text that PostgreSQL can store: no NUL, no lone surrogate. */
 const isStorable = (value: unknown): boolean => typeof value === 'string' && !value.includes('\0') && value.isWellFormed()
 
+const isLonger = (value: unknown, most: number): boolean => typeof value === 'string' && value.length > most
+
 /** A line of text, trimmed. */
 export const Text = (least: number, most: number): PropertyDecorator => compose(
   Transform(({ value }: { value: unknown }) => (typeof value === 'string' ? value.trim() : value)),
-  Length(least, most, sentence(least > 0 ? 'textNeeded' : 'textTooLong', { least, most })),
+  Length(least, most, { message: ({ value }) => sentence(isLonger(value, most) ? 'textTooLong' : 'textNeeded', { least, most }).message }),
   check('storable', 'textUnreadable', isStorable),
 )
 /** Null or absent is allowed and means none; an empty text becomes null. */

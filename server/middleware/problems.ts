@@ -8,14 +8,14 @@ import { say } from '../language'
 import { Problem } from '../problem'
 
 /** Constraints whose violation a person can mend, by name. */
-const CONSTRAINT_PROBLEMS: Record<string, ProblemCode> = {
-  person_email: 'email-taken',
-  customer_name: 'name-taken',
-  system_tag: 'name-taken',
-  circuit_name: 'name-taken',
-  partner_name: 'name-taken',
-  cylinder_number: 'name-taken',
-  posting_reversed_once: 'already-reversed',
+const CONSTRAINT_PROBLEMS: Record<string, { code: ProblemCode; field?: string }> = {
+  person_email: { code: 'email-taken', field: 'email' },
+  customer_name: { code: 'name-taken', field: 'name' },
+  system_tag: { code: 'name-taken', field: 'tag' },
+  circuit_name: { code: 'name-taken', field: 'name' },
+  partner_name: { code: 'name-taken', field: 'name' },
+  cylinder_number: { code: 'name-taken', field: 'number' },
+  posting_reversed_once: { code: 'already-reversed' },
 }
 const UNIQUE_VIOLATION = '23505'
 /** The server is going down, has no room or does not answer: later it may work. */
@@ -27,8 +27,8 @@ export function problemFrom(error: unknown): Problem | null {
   if (error instanceof Problem) return error
   if (error instanceof QueryFailedError || hasCode(error)) {
     const cause = (error instanceof QueryFailedError ? error.driverError : error) as { code?: string; constraint?: string; message?: string }
-    if (cause.code === UNIQUE_VIOLATION && cause.constraint && cause.constraint in CONSTRAINT_PROBLEMS)
-      return new Problem(CONSTRAINT_PROBLEMS[cause.constraint] ?? 'internal')
+    const mendable = cause.code === UNIQUE_VIOLATION && cause.constraint ? CONSTRAINT_PROBLEMS[cause.constraint] : undefined
+    if (mendable) return new Problem(mendable.code, {}, mendable.field ? [{ field: mendable.field, key: 'taken' }] : [])
     if (cause.code && UNAVAILABLE.test(cause.code)) return new Problem('unavailable', {}, [], RETRY_AFTER_SECONDS)
   }
   // pg closes the socket without a code when the server is killed

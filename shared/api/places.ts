@@ -1,5 +1,5 @@
 import type { PlainDate } from '../dates/plain-date'
-import type { PostingPurpose } from './ledger'
+import type { PostingKind, PostingPurpose } from './ledger'
 import type { Category } from '../rules/categories'
 
 export interface CustomerDraft {
@@ -46,6 +46,8 @@ export interface WireSite extends SiteDraft {
   circuitCount: number
   overCount: number
   nearCount: number
+  /** empty by the book */
+  flatCount: number
   version: number
   may: string[]
 }
@@ -254,7 +256,11 @@ export interface WireOverview {
   /** First page, worst first; the rest by GET /api/circuits?sort=-severity */
   circuits: CircuitStanding[]
   stock: { refrigerant: string; massKg: string; cylinders: number }[] | null
-  latest: { id: string; occurredOn: PlainDate; kind: string; circuitName: string | null; siteName: string | null; massKg: string; refrigerant: string; personName: string }[]
+  /** Cylinders and partners are the company's own: null for an owner. */
+  latest: {
+    id: string; occurredOn: PlainDate; kind: PostingKind; circuitName: string | null; siteName: string | null; cylinderNumber: string | null; toCylinderNumber: string | null
+    partnerName: string | null; massKg: string; refrigerant: string; personName: string
+  }[]
 }
 
 /** One call at one site by one technician. */

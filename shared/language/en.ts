@@ -97,7 +97,8 @@ export const en = {
     wrong: 'This value is not usable here.',
     object: 'Something is missing here.',
     unknownField: 'This field is not known here.',
-    textNeeded: 'Fill this in, with at most {most} characters.',
+    textNeeded: 'Fill this in: {most} characters at most.',
+    taken: 'This one is taken: choose another.',
     textTooLong: 'At most {most} characters.',
     textUnreadable: 'This text has signs that cannot be stored. Type it again.',
     id: 'Choose one from the list.',
@@ -230,6 +231,7 @@ export const en = {
       discardDraft: 'Start afresh',
       wrongFields: 'One entry needs a look. | {count} entries need a look.',
       fieldRequired: 'Please fill this in.',
+      namedFault: '{name}: {message}',
       changedMeanwhile: 'Someone changed this in the meantime',
     },
     problem: {
@@ -305,14 +307,14 @@ export const en = {
       flat: 'Flat',
       near: 'Near',
       far: 'Below',
-      none: 'Not rated',
+      none: 'No verdict',
     },
     sentence: {
       over: 'The leak rate is above the threshold.',
       flat: 'By the book the circuit is empty.',
       near: 'The leak rate has come near the threshold.',
       far: 'The leak rate is well below the threshold.',
-      none: 'There is nothing yet to rate.',
+      none: 'No threshold holds here, or nothing has been added yet.',
     },
     beam: {
       name: 'Beam',
@@ -482,16 +484,16 @@ export const en = {
   customer: {
     list: { title: 'Customers', text: 'Whose appliances these are. An owner’s account is tied to one or more of them.', search: 'Name, contact, address', emptyTitle: 'No customer yet', emptyText: 'Add the first one; its sites and systems follow.' },
     name: 'Name', contactName: 'Contact', email: 'E-mail', phone: 'Phone', address: 'Address', note: 'Note', noteHint: 'Only for your own people; the owner does not see it.', sites: 'Sites',
-    add: 'Add customer', change: 'Change customer', addSite: 'Add site',
+    facts: 'About this customer', add: 'Add customer', change: 'Change customer', addSite: 'Add site',
   },
   site: {
     list: { title: 'Sites', text: 'Where the systems stand, with the rules that hold there.', search: 'Site, customer, city', emptyTitle: 'No site yet', emptyText: 'A site belongs to a customer and holds the systems.' },
     one: 'Site', name: 'Name', customer: 'Customer', street: 'Street', city: 'City', region: 'State or region', postalCode: 'Postal code', country: 'Country', countryHint: 'Two letters, such as US.',
-    timeZone: 'Time zone', timeZoneHint: 'Dates of work and deadlines go by it.', elevation: 'Elevation', metres: '{elevation} m', elevationHint: 'Metres above sea level: gauges read against the local air pressure.',
+    timeZone: 'Time zone', timeZoneHint: 'Dates of work and deadlines go by it.', elevation: 'Elevation', metres: '{elevation} m', elevationHint: 'Metres above sea level: gauges read against the local air pressure.', elevationWrong: 'A whole number of metres, such as 210.',
     jurisdiction: 'Jurisdiction', jurisdictions: { US: 'United States', 'US-CA': 'United States, California', EU: 'European Union', GB: 'Great Britain' },
     method: 'Leak rate by', methods: { annualizing: 'Annualizing method', rolling: 'Rolling average method' }, methodHint: 'One method for all appliances of a facility (40 CFR 82.152).',
     packs: 'Rule packs', packsHint: 'Which rules are watched here. Local regulation and licensed practice decide.', noPacks: 'No rule pack is switched on: no threshold is watched here.',
-    systems: 'Systems', circuits: 'Circuits', circuitCount: 'no circuit | one circuit | {count} circuits', over: 'Over', near: 'Near or flat', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
+    systems: 'Systems', circuits: 'Circuits', circuitCount: 'no circuit | one circuit | {count} circuits', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
     summary: 'Leak-rate summary', from: 'From', to: 'To', summaryText: 'All circuits of this site for a period, as PDF.', open: 'Open the PDF',
   },
   system: {
@@ -515,7 +517,7 @@ export const en = {
     one: 'Cylinder', number: 'Number', kind: 'Kind', kinds: { disposable: 'Disposable (DOT 39)', refillable: 'Refillable', recovery: 'Recovery' }, refrigerant: 'Refrigerant', contents: 'Contents', contentsOf: { virgin: 'Virgin', reclaimed: 'Reclaimed', recovered: 'Recovered', mixed: 'Mixed' },
     tare: 'Tare (TW)', tareHint: 'As stamped.', waterCapacity: 'Water capacity (WC)', waterCapacityHint: 'As stamped; the fill limit is computed from it.', testDueOn: 'Next test due', testHint: 'Read the stamp; as a rule five years after the last test.',
     status: 'Status', statuses: { 'in-use': 'In use', returned: 'Returned', scrapped: 'Scrapped' }, holder: 'Held by', place: 'Place', owner: 'Gas of', ownerHint: 'Recovered gas goes back to this owner’s equipment or to a reclaimer.', content: 'Holds', limit: 'Fill limit', room: 'Room', allStatuses: 'All states', allRefrigerants: 'All refrigerants',
-    add: 'Add cylinder', change: 'Change cylinder', pastTest: 'Past its test date', pastTestText: 'It may not be filled. What is in it may still be used up or returned.', stock: 'Post stock', ledger: 'Its ledger', facts: 'As stamped', mine: 'Mine',
+    add: 'Add cylinder', change: 'Change cylinder', pastTest: 'Past its test date', pastTestText: 'It may not be filled. What is in it may still be used up or returned.', stock: 'Post stock', ledger: 'Its ledger', ledgerNone: 'Post what it holds now, or the next purchase into it.', facts: 'As stamped', mine: 'Mine',
     limitNote: '80 % of the water capacity times the specific gravity of the liquid at 77 °F (25 °C). Common practice after AHRI Guideline K; the stamp and the rules for your cylinder go first.', caution: 'Never fill a cylinder above 80 %, past its test date, damaged, or of another gas.', noLimit: 'no limit without WC', weighing: 'Scale differs from the book',
   },
   partner: {
@@ -897,7 +899,7 @@ export const en = {
     text: 'Circuits over and near their threshold first.',
     counts: 'Circuits by standing',
     circuitsOf: {
-      over: 'over the threshold', flat: 'flat, empty by the book', near: 'near the threshold', far: 'with room left', none: 'not rated',
+      over: 'over the threshold', flat: 'flat, empty by the book', near: 'near the threshold', far: 'with room left', none: 'no threshold, or nothing added',
     },
     worst: 'The worst first',
     circuit: 'Circuit',

@@ -1,5 +1,5 @@
 import { useI18n } from 'vue-i18n'
-import type { EnteredWeighing } from '../../shared/api/ledger'
+import type { EnteredWeighing, WirePosting } from '../../shared/api/ledger'
 import type { PostingWarning } from '../../shared/mass/warnings'
 import type { Refusal } from '../../shared/mass/refusals'
 import { useUnits } from './useUnits'
@@ -10,7 +10,9 @@ interface Names {
   toCylinderId?: string | null
 }
 
-/** Refusals, warnings and readings of a posting as sentences, with masses in the person's unit. */
+type Move = Pick<WirePosting, 'kind' | 'circuitName' | 'siteName' | 'cylinderNumber' | 'toCylinderNumber' | 'partnerName'>
+
+/** Refusals, warnings, moves and readings of a posting as sentences, with masses in the person's unit. */
 export function usePostingWords() {
   const { t } = useI18n()
   const { formatMass, formatDate } = useUnits()
@@ -66,5 +68,21 @@ export function usePostingWords() {
     ].filter((words): words is string => Boolean(words))
   }
 
-  return { refusalWords, warningWords, enteredWords }
+  /** From where to where, by the names a person knows. */
+  function moveWords({ kind, circuitName, siteName, cylinderNumber, toCylinderNumber, partnerName }: Move): string {
+    const circuit = circuitName && [circuitName, siteName].filter(Boolean).join(', ')
+    const [from, to] = ((): [string | null, string | null] => {
+      switch (kind) {
+        case 'charge': return [cylinderNumber, circuit]
+        case 'recovery': return [circuit, cylinderNumber]
+        case 'transfer': return [cylinderNumber, toCylinderNumber]
+        case 'purchase': case 'receipt': return [partnerName, cylinderNumber]
+        case 'return': case 'reclaim': case 'destruction': return [cylinderNumber, partnerName]
+        default: return [circuit ?? cylinderNumber, null]
+      }
+    })()
+    return from && to ? t('posting.list.move', { from, to }) : from ?? to ?? ''
+  }
+
+  return { refusalWords, warningWords, enteredWords, moveWords }
 }

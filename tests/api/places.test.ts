@@ -43,6 +43,15 @@ describe('customers', () => {
     expect(trail.rows[0].before).toEqual({ name: customer.name })
   })
 
+  it('name the field that is taken or too long', async () => {
+    const { officer } = await aCompany(server)
+    await aCustomer(officer, { name: 'Grocer' })
+    const taken = await officer.post('/api/customers', customerDraft({ name: 'Grocer' })).expect(409)
+    expect(taken.body).toMatchObject({ code: 'name-taken', errors: [{ field: 'name', message: 'This one is taken: choose another.' }] })
+    const long = await officer.post('/api/customers', customerDraft({ name: 'x'.repeat(121) })).expect(422)
+    expect(long.body.errors).toEqual([{ field: 'name', message: 'At most 120 characters.' }])
+  })
+
   it('of another company, of another owner, and of nowhere look alike', async () => {
     const ours = await aCompany(server)
     const theirs = await aCompany(server)
@@ -147,7 +156,8 @@ describe('a circuit whose charge passes the threshold', () => {
     const { technician, officer, owner, circuit, cylinder } = await aChargedCircuit()
     await post(technician, aDraft({ kind: 'charge', pounds: '10', cylinderId: cylinder.id, circuitId: circuit.id, purpose: 'leak' })).expect(201)
     const [own, other] = [await owner(circuit.customerId), await owner((await aCustomer(officer)).id)]
-    expect((await own.get('/api/overview')).body).toMatchObject({ over: 1, stock: null })
+    expect((await own.get('/api/overview')).body).toMatchObject({ over: 1, stock: null, latest: [{ kind: 'charge', cylinderNumber: null }, {}, {}] })
+    expect((await officer.get('/api/overview')).body.latest[0]).toMatchObject({ kind: 'charge', cylinderNumber: cylinder.number })
     expect((await other.get('/api/overview')).body).toMatchObject({ over: 0, circuits: [], latest: [] })
     await other.get(`/api/circuits/${circuit.id}`).expect(404)
     const { body } = await own.get(`/api/postings?circuitId=${circuit.id}`).expect(200)

@@ -15,7 +15,8 @@ const SELECT = (key: string): string => `
          (select count(*)::int from system y where y.company_id = s.company_id and y.site_id = s.id) as "systemCount",
          (select count(*)::int from circuit t where t.company_id = s.company_id and t.site_id = s.id) as "circuitCount",
          (select count(*)::int from circuit_standing t where t.company_id = s.company_id and t.site_id = s.id and t.standing = 'over') as "overCount",
-         (select count(*)::int from circuit_standing t where t.company_id = s.company_id and t.site_id = s.id and t.standing in ('near', 'flat')) as "nearCount"
+         (select count(*)::int from circuit_standing t where t.company_id = s.company_id and t.site_id = s.id and t.standing = 'near') as "nearCount",
+         (select count(*)::int from circuit_standing t where t.company_id = s.company_id and t.site_id = s.id and t.standing = 'flat') as "flatCount"
     from site s join customer c on c.company_id = s.company_id and c.id = s.customer_id
    where s.company_id = $1 and ($2::uuid[] is null or s.customer_id = any ($2::uuid[]))`
 
