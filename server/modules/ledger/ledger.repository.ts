@@ -2,7 +2,7 @@ import type { PostingDraft, PostingKind } from '../../../shared/api/ledger'
 import { kg } from '../../../shared/mass/mass'
 import type { AccountRef, Entry, OriginalPosting } from '../../../shared/mass/states'
 import { toKgText } from '../../../shared/mass/mass'
-import type { Tx } from '../../database'
+import { prepared, type Tx } from '../../database'
 import lockSql from './lock.sql?raw'
 import readStatesSql from './read-states.sql?raw'
 import writePostingSql from './write-posting.sql?raw'
@@ -11,13 +11,13 @@ import writePostingSql from './write-posting.sql?raw'
 export type StatesRow = Record<string, string | null> & { known_hash: Buffer | null }
 
 export async function lockAccounts(tx: Tx, companyId: string, ids: string[]): Promise<void> {
-  await tx.query(lockSql, [companyId, ids])
+  await prepared(tx, 'lock-accounts', lockSql, [companyId, ids])
 }
 
 export async function readStates(tx: Tx, companyId: string, draft: PostingDraft): Promise<StatesRow> {
-  const [row] = await tx.query(readStatesSql, [
+  const [row] = await prepared<StatesRow>(tx, 'read-states', readStatesSql, [
     companyId, draft.id, draft.cylinderId, draft.toCylinderId, draft.circuitId, draft.partnerId, draft.visitId, draft.leakId, draft.occurredOn,
-  ]) as StatesRow[]
+  ])
   if (!row) throw new Error('read-states.sql gave no row.')
   return row
 }
@@ -36,10 +36,10 @@ export async function writePosting(tx: Tx, companyId: string, posting: PostingTo
   const lines = posting.entries.map(({ account, refrigerant, massKg }, index) => ({
     line: index + 1, accountKind: account.kind, accountId: idOf(account), refrigerant, massKg: toKgText(massKg),
   }))
-  const [row] = await tx.query(writePostingSql, [
+  const [row] = await prepared<{ written: number; lines: number }>(tx, 'write-posting', writePostingSql, [
     companyId, JSON.stringify({ ...posting.draft, siteId: posting.siteId, customerId: posting.customerId }), JSON.stringify(lines),
     posting.personId, posting.contentHash,
-  ]) as { written: number; lines: number }[]
+  ])
   if (row?.written === 1 && row.lines !== lines.length) throw new Error(`Posting ${posting.draft.id} names an account that does not exist.`)
   return row?.written === 1
 }

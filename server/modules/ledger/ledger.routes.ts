@@ -18,9 +18,10 @@ export const ledgerRoutes = (house: House): Route[] => [
       const key = request.get('idempotency-key')
       if (!key) throw new Problem('idempotency-key-missing')
       if (key.replaceAll('"', '') !== body.id) throw new Problem('posting-id-reused')
-      const posted = await house.database.inCompany(who, (tx) => ledger.post(tx, who, body, house.now()))
-      const wire = await house.database.inCompany(who, (tx) => ledger.getPosting(tx, who, posted.id))
-      return new Answer(posted.isNew ? CREATED : OK, wire)
+      return house.database.inCompany(who, async (tx) => {
+        const posted = await ledger.post(tx, who, body, house.now())
+        return new Answer(posted.isNew ? CREATED : OK, await ledger.getPosting(tx, who, posted.id))
+      })
     },
   }),
   route({

@@ -1,7 +1,7 @@
 import type { Page } from '../../../shared/api/page'
 import type { WireEntry, WirePosting } from '../../../shared/api/ledger'
 import type { Actor } from '../../actor'
-import type { Tx } from '../../database'
+import { prepared, type Tx } from '../../database'
 import { pageOf, pageOrder, soughtWords, type SortKey } from '../../page'
 import type { PostingsQuery } from './ledger.dto'
 import { draftOf } from './ledger.repository'
@@ -34,7 +34,7 @@ const SELECT = `
     left join partner pa on pa.company_id = p.company_id and pa.id = p.partner_id`
 
 export async function postingById(tx: Tx, who: Actor, id: string): Promise<WirePosting | null> {
-  const [row] = await tx.query(`${SELECT} where p.company_id = $1 and p.id = $2 and ${ownedBy(3)}`, [who.companyId, id, who.customerIds]) as Row[]
+  const [row] = await prepared<Row>(tx, 'posting-by-id', `${SELECT} where p.company_id = $1 and p.id = $2 and ${ownedBy(3)}`, [who.companyId, id, who.customerIds])
   return row ? wirePosting(row, who) : null
 }
 

@@ -1,6 +1,6 @@
 import type { Category } from '../../../shared/rules/categories'
 import type { WireHistory } from '../../../shared/api/places'
-import type { Tx } from '../../database'
+import { prepared, type Tx } from '../../database'
 
 /** What the rates and the standing of a circuit are computed from. */
 export interface CircuitRecord {
@@ -27,7 +27,7 @@ export interface CircuitRecord {
  * statement. Reversed postings and reversals are left out. An opening charge counts only where it filled a new circuit.
  */
 export async function circuitRecords(tx: Tx, companyId: string, circuitIds: string[]): Promise<CircuitRecord[]> {
-  return await tx.query(
+  return prepared<CircuitRecord>(tx, 'circuit-records',
     `select c.id as circuit_id, c.customer_id, c.site_id, c.system_id, c.refrigerant, c.category, c.status, c.commissioned_on,
             sy.installed_on, sy.subsector_decision, si.leak_rate_method, si.rule_packs, si.time_zone, coalesce(b.mass_kg, 0)::text as book_kg,
             (select coalesce(json_agg(json_build_object('effectiveOn', f.effective_on, 'massKg', f.mass_kg::text) order by f.recorded_at), '[]')
@@ -51,7 +51,7 @@ export async function circuitRecords(tx: Tx, companyId: string, circuitIds: stri
        join system sy on sy.company_id = c.company_id and sy.id = c.system_id
        join site si on si.company_id = c.company_id and si.id = c.site_id
        left join balance b on b.company_id = c.company_id and b.account_id = c.id and b.refrigerant = c.refrigerant
-      where c.company_id = $1 and c.id = any ($2::uuid[])`, [companyId, circuitIds]) as CircuitRecord[]
+      where c.company_id = $1 and c.id = any ($2::uuid[])`, [companyId, circuitIds])
 }
 
 export interface RateToStore {
@@ -73,7 +73,7 @@ export interface RateToStore {
 
 /** Replaces the stored rates of a circuit by what was computed anew. */
 export async function storeRates(tx: Tx, companyId: string, record: CircuitRecord, rates: RateToStore[]): Promise<void> {
-  await tx.query(
+  await prepared(tx, 'store-rates',
     `with kept as (
        insert into addition_rate (company_id, posting_id, circuit_id, customer_id, occurred_on, position, mass_kg, counted_kg, added_kg, days,
               full_charge_kg, rate_percent, threshold_percent, is_above, exempt, basis, leak_id)
@@ -101,7 +101,7 @@ export interface StandingToStore {
 }
 
 export async function storeStanding(tx: Tx, companyId: string, record: CircuitRecord, standing: StandingToStore): Promise<void> {
-  await tx.query(
+  await prepared(tx, 'store-standing',
     `insert into circuit_standing (company_id, circuit_id, customer_id, site_id, standing, rate_percent, rated_on, threshold_percent, severity, rate_ten_thousandths)
      values ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10)
      on conflict (company_id, circuit_id) do update set standing = excluded.standing, rate_percent = excluded.rate_percent, rated_on = excluded.rated_on,
