@@ -86,6 +86,12 @@ export async function storeRates(tx: Tx, companyId: string, record: CircuitRecor
          occurred_on = excluded.occurred_on, position = excluded.position, counted_kg = excluded.counted_kg, added_kg = excluded.added_kg,
          days = excluded.days, full_charge_kg = excluded.full_charge_kg, rate_percent = excluded.rate_percent,
          threshold_percent = excluded.threshold_percent, is_above = excluded.is_above, exempt = excluded.exempt, basis = excluded.basis, leak_id = excluded.leak_id
+       -- a rate rests on what came before it: most of them stay as they are, and are not written again
+       where (addition_rate.occurred_on, addition_rate.position, addition_rate.counted_kg, addition_rate.added_kg, addition_rate.days, addition_rate.full_charge_kg,
+              addition_rate.rate_percent, addition_rate.threshold_percent, addition_rate.is_above, addition_rate.exempt, addition_rate.basis, addition_rate.leak_id)
+             is distinct from
+             (excluded.occurred_on, excluded.position, excluded.counted_kg, excluded.added_kg, excluded.days, excluded.full_charge_kg,
+              excluded.rate_percent, excluded.threshold_percent, excluded.is_above, excluded.exempt, excluded.basis, excluded.leak_id)
      )
      delete from addition_rate where company_id = $1 and circuit_id = $2 and not (posting_id = any ($5::uuid[]))`,
     [companyId, record.circuit_id, record.customer_id, JSON.stringify(rates), rates.map((rate) => rate.postingId)])

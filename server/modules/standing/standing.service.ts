@@ -8,6 +8,7 @@ import { isAbove, toPercentText, toTenThousandths, type Percent } from '../../..
 import { rateAdditions, type RatedAddition } from '../../../shared/leak-rate/rated-additions'
 import { isPositive, kg, toKgText } from '../../../shared/mass/mass'
 import type { Tx } from '../../database'
+import { lockAccounts } from '../ledger/accounts'
 import { lowestThreshold } from '../../../shared/rules/engine'
 import { decisionsFor, thresholdsOn } from './rules'
 import * as repository from './history.repository'
@@ -32,9 +33,16 @@ const wireHistoryOf = (record: CircuitRecord): WireCircuit['history'] => ({
 
 /**
  * Computes the rates and the standing of circuits anew from their whole history and keeps the result for
- * lists. Called in the transaction of whatever changed something they rest on.
+ * lists. Called in the transaction of whatever changed something they rest on. A posting in flight is
+ * waited for: else the older of the two results could be kept last.
  */
 export async function reviewCircuits(tx: Tx, companyId: string, circuitIds: string[]): Promise<void> {
+  await lockAccounts(tx, companyId, circuitIds)
+  await reviewLockedCircuits(tx, companyId, circuitIds)
+}
+
+/** As `reviewCircuits`, for the ledger, which holds the accounts already. */
+export async function reviewLockedCircuits(tx: Tx, companyId: string, circuitIds: string[]): Promise<void> {
   for (const record of await repository.circuitRecords(tx, companyId, circuitIds)) {
     const rated = rateAdditions(historyOf(record))
     const rates = rated.map((addition, position) => rateToStore(record, addition, position))
