@@ -20,8 +20,22 @@ export async function updateVersioned(tx: Tx, table: string, key: { companyId: s
 
 /** Inserts one row. */
 export async function insertRow(tx: Tx, table: string, columns: Record<string, unknown>): Promise<void> {
+  await tx.query(insertOf(table, columns), Object.values(columns))
+}
+
+/**
+ * Inserts a row whose id the device made; the same id again, also at the same moment, inserts nothing.
+ *
+ * @returns whether it was inserted
+ */
+export async function insertOnce(tx: Tx, table: string, columns: Record<string, unknown>): Promise<boolean> {
+  const rows = await tx.query(`${insertOf(table, columns)} on conflict (company_id, id) do nothing returning id`, Object.values(columns)) as unknown[]
+  return rows.length > 0
+}
+
+function insertOf(table: string, columns: Record<string, unknown>): string {
   const names = Object.keys(columns)
-  await tx.query(`insert into ${table} (${names.join(', ')}) values (${names.map((_name, index) => `$${index + 1}`).join(', ')})`, Object.values(columns))
+  return `insert into ${table} (${names.join(', ')}) values (${names.map((_name, index) => `$${index + 1}`).join(', ')})`
 }
 
 /** Whether a row of this company has that id, and belongs to the customers of an owner's account. */

@@ -103,6 +103,7 @@ export const en = {
     textUnreadable: 'This text has signs that cannot be stored. Type it again.',
     id: 'Choose one from the list.',
     idV7: 'The id must be a UUID of version 7.',
+    idReused: 'This id names another record already. Begin the entry anew.',
     list: 'Choose one or more from the list.',
     listTooLong: 'At most {most}.',
     listRepeats: 'The same one stands here twice.',
@@ -493,7 +494,7 @@ export const en = {
     jurisdiction: 'Jurisdiction', jurisdictions: { US: 'United States', 'US-CA': 'United States, California', EU: 'European Union', GB: 'Great Britain' },
     method: 'Leak rate by', methods: { annualizing: 'Annualizing method', rolling: 'Rolling average method' }, methodHint: 'One method for all appliances of a facility (40 CFR 82.152).',
     packs: 'Rule packs', packsHint: 'Which rules are watched here. Local regulation and licensed practice decide.', noPacks: 'No rule pack is switched on: no threshold is watched here.',
-    systems: 'Systems', circuits: 'Circuits', circuitCount: 'no circuit | one circuit | {count} circuits', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
+    systems: 'Systems', noSystems: 'No system yet', noSystemsText: 'Add each unit that stands here by its tag; then its circuits, one for each closed refrigerant loop.', circuits: 'Circuits', circuitCount: 'no circuit | one circuit | {count} circuits', add: 'Add site', change: 'Change site', addSystem: 'Add system', facts: 'About this site', trail: 'Changes', circuitsHere: 'All circuits of this site', postingsHere: 'Postings at this site',
     summary: 'Leak-rate summary', from: 'From', to: 'To', summaryText: 'All circuits of this site for a period, as PDF.', open: 'Open the PDF',
   },
   system: {

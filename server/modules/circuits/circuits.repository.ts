@@ -95,8 +95,8 @@ export const verificationsOf = async (tx: Tx, companyId: string, circuitId: stri
        from verification v join person p on p.company_id = v.company_id and p.id = v.person_id
       where v.company_id = $1 and v.circuit_id = $2 order by v.tested_on desc, v.recorded_at desc`, [companyId, circuitId]) as WireVerification[]
 
-/** Where a component, mark or leak sits. */
-export const circuitOfPart = async (tx: Tx, table: 'component' | 'watch_mark' | 'leak', companyId: string, id: string): Promise<string | null> =>
+/** Where a component, mark, leak or test sits. */
+export const circuitOfPart = async (tx: Tx, table: 'component' | 'watch_mark' | 'leak' | 'verification', companyId: string, id: string): Promise<string | null> =>
   (await tx.query(`select circuit_id from ${table} where company_id = $1 and id = $2`, [companyId, id]) as { circuit_id: string }[])[0]?.circuit_id ?? null
 
 export const hasPostings = async (tx: Tx, companyId: string, circuitId: string): Promise<boolean> =>

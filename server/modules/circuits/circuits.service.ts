@@ -5,9 +5,9 @@ import { plainDate } from '../../../shared/dates/plain-date'
 import { kg, lessThan, plus, scaled, toKgText } from '../../../shared/mass/mass'
 import { held, type Actor } from '../../actor'
 import type { Tx } from '../../database'
-import { badField, notFound, Problem } from '../../problem'
+import { badField, notFound, Problem, type FieldFault } from '../../problem'
 import { insertRow, toColumns, updateVersioned } from '../../versioned'
-import { openAccount } from '../ledger/accounts'
+import { lockAccounts, openAccount } from '../ledger/accounts'
 import * as standing from '../standing/standing.service'
 import * as trail from '../trail/trail.service'
 import * as repository from './circuits.repository'
@@ -81,9 +81,12 @@ async function systemOf(tx: Tx, who: Actor, systemId: string): Promise<{ custome
  * @throws Problem not-found, changed-meanwhile, bad-input
  */
 export async function changeCircuit(tx: Tx, who: Actor, id: string, version: number, draft: Omit<CircuitDraft, 'fullCharge'>, now: Date): Promise<WireCircuit> {
+  await lockAccounts(tx, who.companyId, [id])
   const before = await getCircuit(tx, who, id, now)
-  if (draft.systemId !== before.systemId) throw badField('systemId', 'systemStays')
-  if (draft.refrigerant !== before.refrigerant && (await repository.hasPostings(tx, who.companyId, id))) throw badField('refrigerant', 'refrigerantStays')
+  const faults: FieldFault[] = []
+  if (draft.systemId !== before.systemId) faults.push({ field: 'systemId', key: 'systemStays' })
+  if (draft.refrigerant !== before.refrigerant && (await repository.hasPostings(tx, who.companyId, id))) faults.push({ field: 'refrigerant', key: 'refrigerantStays' })
+  if (faults.length > 0) throw new Problem('bad-input', {}, faults)
   await updateVersioned(tx, 'circuit', { companyId: who.companyId, id, version }, toColumns(draft))
   await trail.recordChange(tx, who, { action: 'change', subject: 'circuit', subjectId: id, subjectName: draft.name }, before, draft)
   await standing.reviewCircuits(tx, who.companyId, [id])

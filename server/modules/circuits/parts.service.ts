@@ -3,7 +3,7 @@ import type { ComponentDraft, LeakDraft, MarkDraft, RepairDraft, VerificationDra
 import type { Actor } from '../../actor'
 import type { Tx } from '../../database'
 import { badField, notFound } from '../../problem'
-import { insertRow, toColumns } from '../../versioned'
+import { insertOnce, insertRow, toColumns } from '../../versioned'
 import * as standing from '../standing/standing.service'
 import * as trail from '../trail/trail.service'
 import { getCircuit } from './circuits.service'
@@ -39,17 +39,20 @@ export async function addMark(tx: Tx, who: Actor, circuitId: string, draft: Mark
 
 export async function resolveMark(tx: Tx, who: Actor, id: string, resolvedOn: string, now: Date): Promise<WireCircuit> {
   const circuitId = await circuitOf(tx, who, 'watch_mark', id)
+  const mark = (await getCircuit(tx, who, circuitId, now)).marks.find((each) => each.id === id)
+  if (!mark) throw notFound('watch_mark')
+  if (resolvedOn < mark.markedOn) throw badField('resolvedOn', 'dateOrder')
   await tx.query('update watch_mark set resolved_on = $3 where company_id = $1 and id = $2', [who.companyId, id, resolvedOn])
-  await trail.record(tx, who, { action: 'resolve', subject: 'watch-mark', subjectId: id, subjectName: resolvedOn, after: { resolvedOn } })
+  await trail.recordChange(tx, who, { action: 'resolve', subject: 'watch-mark', subjectId: id, subjectName: mark.text }, mark, { resolvedOn })
   return getCircuit(tx, who, circuitId, now)
 }
 
 /** A leak has the id that the device made; the same id again changes nothing. */
 export async function addLeak(tx: Tx, who: Actor, circuitId: string, draft: LeakDraft, now: Date): Promise<WireCircuit> {
   const circuit = await getCircuit(tx, who, circuitId, now)
-  if (circuit.leaks.some((leak) => leak.id === draft.id)) return circuit
   checkComponent(circuit, draft.componentId)
-  await insertRow(tx, 'leak', { company_id: who.companyId, customer_id: circuit.customerId, circuit_id: circuitId, person_id: who.personId, ...toColumns(draft) })
+  const isNew = await insertOnce(tx, 'leak', { company_id: who.companyId, customer_id: circuit.customerId, circuit_id: circuitId, person_id: who.personId, ...toColumns(draft) })
+  if (!isNew) return knownPart(tx, who, 'leak', draft.id, circuitId, now)
   await trail.record(tx, who, { action: 'create', subject: 'leak', subjectId: draft.id, subjectName: draft.position ?? draft.cause, after: { ...draft, circuitId } })
   return getCircuit(tx, who, circuitId, now)
 }
@@ -65,15 +68,21 @@ export async function repairLeak(tx: Tx, who: Actor, id: string, draft: RepairDr
   return getCircuit(tx, who, circuitId, now)
 }
 
-/** A test has the id that the device made. A passed follow-up that showed all leaks repaired restarts the rolling window. */
+/** A test has the id that the device made; the same id again changes nothing. A passed follow-up that showed all leaks repaired restarts the rolling window. */
 export async function addVerification(tx: Tx, who: Actor, circuitId: string, draft: VerificationDraft, now: Date): Promise<WireCircuit> {
   const circuit = await getCircuit(tx, who, circuitId, now)
-  if (circuit.verifications.some((test) => test.id === draft.id)) return circuit
   if (draft.leakId && !circuit.leaks.some((leak) => leak.id === draft.leakId)) throw badField('leakId', 'posting.unknown-leak')
   if (draft.showsAllRepaired && !draft.passed) throw badField('showsAllRepaired', 'notHere')
-  await insertRow(tx, 'verification', { company_id: who.companyId, customer_id: circuit.customerId, circuit_id: circuitId, person_id: who.personId, ...toColumns(draft) })
+  const isNew = await insertOnce(tx, 'verification', { company_id: who.companyId, customer_id: circuit.customerId, circuit_id: circuitId, person_id: who.personId, ...toColumns(draft) })
+  if (!isNew) return knownPart(tx, who, 'verification', draft.id, circuitId, now)
   await trail.record(tx, who, { action: 'create', subject: 'verification', subjectId: draft.id, subjectName: draft.type, after: { ...draft, circuitId } })
   await standing.reviewCircuits(tx, who.companyId, [circuitId])
+  return getCircuit(tx, who, circuitId, now)
+}
+
+/** The answer to an id that is there already. @throws Problem bad-input where it stands at another circuit */
+async function knownPart(tx: Tx, who: Actor, table: 'leak' | 'verification', id: string, circuitId: string, now: Date): Promise<WireCircuit> {
+  if ((await circuitOfPart(tx, table, who.companyId, id)) !== circuitId) throw badField('id', 'idReused')
   return getCircuit(tx, who, circuitId, now)
 }
 

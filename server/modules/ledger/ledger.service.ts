@@ -60,7 +60,7 @@ export async function post(tx: Tx, who: Actor, sent: PostingDraft, now: Date): P
   const contents = original ? null : contentsAfter(draft, states)
   const into = receivingCylinder(draft, states)
   if (contents && into) await repository.setContents(tx, who.companyId, into.id, contents.contents, contents.ownerCustomerId)
-  if (row.circuit_id) await standing.reviewCircuits(tx, who.companyId, [row.circuit_id])
+  if (row.circuit_id) await standing.reviewLockedCircuits(tx, who.companyId, [row.circuit_id])
   return { id: draft.id, isNew: true }
 }
 
