@@ -51,11 +51,12 @@ export function pageOf<Raw extends { id: string; page_key: unknown }, Row>(raws:
 const writeCursor = (key: unknown, id: string): string =>
   Buffer.from(JSON.stringify([String(key), id])).toString('base64url')
 
+const MOST_INTEGER = 2_147_483_647 // of PostgreSQL's `integer`; the severity of a circuit has ten digits
 const UUID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/
 
 const FITS: Record<SortKey['type'], (value: string) => boolean> = {
   text: () => true,
-  integer: (value) => /^-?\d{1,9}$/.test(value),
+  integer: (value) => /^-?\d{1,10}$/.test(value) && Math.abs(Number(value)) <= MOST_INTEGER,
   bigint: (value) => /^-?\d{1,18}$/.test(value),
   date: isPlainDate,
   timestamptz: (value) => value.length < 40 && !Number.isNaN(Date.parse(value)) && /^\d{4}-\d{2}-\d{2} /.test(value),
