@@ -591,7 +591,7 @@ export const en = {
   trail: {
     title: 'Trail', text: 'Postings stand in the ledger; everything else that was changed stands here.', subject: 'What', at: 'When', person: 'Who', change: 'Change', search: 'Name, person, action', all: 'Everything', emptyTitle: 'Nothing yet', emptyText: 'The first change of a record is noted here.', fields: 'one field | {count} fields', to: 'to',
     subjects: { customer: 'Customer', site: 'Site', system: 'System', circuit: 'Circuit', component: 'Component', 'watch-mark': 'Watch mark', leak: 'Leak', verification: 'Verification test', cylinder: 'Cylinder', partner: 'Trade partner', person: 'Person', visit: 'Visit' },
-    actions: { create: 'added', change: 'changed', invite: 'invited', disable: 'shut', enable: 'opened again', 'change-password': 'password changed', 'revise-full-charge': 'full charge revised', resolve: 'resolved', repair: 'repaired', attach: 'calculation attached' },
+    actions: { create: 'added', change: 'changed', invite: 'invited', accept: 'accepted the invitation', disable: 'shut', enable: 'opened again', 'change-password': 'password changed', 'revise-full-charge': 'full charge revised', resolve: 'resolved', repair: 'repaired', attach: 'calculation attached' },
   },
   pack: {
     title: 'Rule packs', text: 'The law as Weighback computes it: every value with its source, since when it holds and when it was last checked. A site switches packs on.',

@@ -2,7 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import supertest from 'supertest'
 import { hashPassword } from '../../server/modules/session/passwords'
 import { aCompany, aPerson, aServer, clientOf, nobody, OUR_HEADER, type Client, type TestServer } from '../support/server'
-import { aCustomer } from '../support/builders'
+import { linkIn } from '../support/mail'
 
 let server: TestServer
 beforeAll(async () => { server = await aServer() })
@@ -135,56 +135,10 @@ describe('passwords', () => {
     await nobody(server).post('/api/password/forgot', { email }).expect(202)
     await nobody(server).post('/api/password/forgot', { email: 'nobody@nowhere.example' }).expect(202)
     await expect.poll(() => server.mails.length).toBe(before + 1)
-    const token = linkIn(server.mails.at(-1) ?? '', 'reset')
+    const token = linkIn(server.mails.at(-1), 'reset')
     await nobody(server).post('/api/password/reset', { token, password: 'quite another password' }).expect(204)
     await person.get('/api/me').expect(401)
     await signIn(email, 'quite another password').expect(200)
     expect((await nobody(server).post('/api/password/reset', { token, password: 'a third password' }).expect(410)).body.code).toBe('link-expired')
-  })
-})
-
-/** The token of a link in a raw message, with the soft line breaks of quoted-printable taken out. */
-function linkIn(mail: string, kind: 'reset' | 'invitation'): string {
-  const text = mail.replace(/=\r?\n/g, '').replaceAll('=3D', '=')
-  const token = new RegExp(`http://127\\.0\\.0\\.1:8080/${kind}/([\\w.-]+)`).exec(text)?.[1]
-  if (!token) throw new Error(`No link in: ${mail}`)
-  return token
-}
-
-describe('people', () => {
-  const draft = (given: object = {}) => ({ name: 'Nell Ostrand', email: `nell-${Math.random().toString(36).slice(2)}@people.example`, role: 'technician', certificateNumber: 'TC-9', certificateType: 'II', customerIds: [], ...given })
-
-  it('come by an invitation that they accept once with a password of their own', async () => {
-    const { administrator } = await aCompany(server)
-    const person = draft()
-    const { body } = await administrator.post('/api/people', person).expect(201)
-    expect(body).toMatchObject({ state: 'invited', mailSent: true })
-    const mail = server.mails.at(-1) ?? ''
-    expect(mail).toContain(`To: ${person.email}`)
-    const token = linkIn(mail, 'invitation')
-    expect((await nobody(server).get(`/api/invitations/${token}`).expect(200)).body.email).toBe(person.email)
-    const accepted = await nobody(server).post(`/api/invitations/${token}`, { name: 'Nell O.', password: PASSWORD }).expect(200)
-    expect((await withCookie(cookiesOf(accepted)).get('/api/me').expect(200)).body).toMatchObject({ name: 'Nell O.', role: 'technician' })
-    await nobody(server).post(`/api/invitations/${token}`, { name: 'Again', password: PASSWORD }).expect(410)
-    expect((await administrator.get(`/api/people/${body.id}`)).body.state).toBe('active')
-  })
-
-  it('are kept by one address each, and an owner needs a customer of this company', async () => {
-    const { administrator, officer } = await aCompany(server)
-    const foreign = await aCustomer((await aCompany(server)).officer)
-    const person = draft()
-    await administrator.post('/api/people', person).expect(201)
-    expect((await administrator.post('/api/people', { ...person, email: person.email.toUpperCase() }).expect(409)).body.code).toBe('email-taken')
-    for (const customerIds of [[], [foreign.id]]) await administrator.post('/api/people', draft({ role: 'owner', customerIds })).expect(422)
-    const own = await aCustomer(officer)
-    await administrator.post('/api/people', draft({ role: 'owner', customerIds: [own.id] })).expect(201)
-    await officer.post('/api/people', draft()).expect(403)
-  })
-
-  it('keep one administrator at least', async () => {
-    const { administrator } = await aCompany(server)
-    const { body } = await administrator.post(`/api/people/${administrator.personId}/disable`).expect(422)
-    expect(body.errors[0].message).toContain('last administrator')
-    await administrator.get('/api/me').expect(200)
   })
 })

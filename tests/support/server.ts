@@ -116,6 +116,7 @@ export async function aPerson(server: TestServer, companyId: string, role: Role,
     await tx.insert(Person, {
       companyId, id, email: `${role}-${id.slice(-12)}@people.example`, name: `Test ${role}`, role, version: 1,
       preferences: { massUnit: 'lb', pressureUnit: 'psig', temperatureUnit: 'F', theme: 'system', locale: 'en' },
+      passwordHash: 'no password fits this',
       certificateNumber: role === 'technician' ? 'TC-0001' : null, certificateType: role === 'technician' ? 'Universal' : null,
     } as never)
     for (const customerId of customerIds) await tx.query('insert into person_customer values ($1, $2, $3)', [companyId, id, customerId])

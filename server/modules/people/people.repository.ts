@@ -45,7 +45,7 @@ export async function setCustomers(tx: Tx, companyId: string, personId: string, 
 export const customersThere = async (tx: Tx, companyId: string, ids: string[]): Promise<number> =>
   (await tx.query('select count(*)::int as count from customer where company_id = $1 and id = any ($2::uuid[])', [companyId, ids]) as { count: number }[])[0]?.count ?? 0
 
-/** Active administrators other than this person; locked, so that two cannot remove each other at once. */
+/** Administrators other than this person who can sign in; locked, so that two cannot remove each other at once. */
 export const otherAdministrators = async (tx: Tx, companyId: string, personId: string): Promise<number> =>
-  (await tx.query(`select id from person where company_id = $1 and role = 'administrator' and disabled_at is null order by id for update`, [companyId]) as { id: string }[])
+  (await tx.query(`select id from person where company_id = $1 and role = 'administrator' and disabled_at is null and password_hash is not null order by id for update`, [companyId]) as { id: string }[])
     .filter(({ id }) => id !== personId).length

@@ -6,7 +6,7 @@ import type { House } from '../../house'
 import { invitationLetter } from '../../mail/letters'
 import { badField, notFound } from '../../problem'
 import { insertRow, toColumns, updateVersioned } from '../../versioned'
-import { endSessions, newLink } from '../session/session.service'
+import { endLinks, endSessions, newLink } from '../session/session.service'
 import * as trail from '../trail/trail.service'
 import * as repository from './people.repository'
 
@@ -46,6 +46,8 @@ export async function changePerson(tx: Tx, who: Actor, id: string, version: numb
   await repository.setCustomers(tx, who.companyId, id, customerIds)
   await trail.recordChange(tx, who, { action: 'change', subject: 'person', subjectId: id, subjectName: draft.name }, before, draft)
   const hasNewRights = draft.role !== before.role || draft.email !== before.email || [...customerIds].sort().join() !== [...before.customerIds].sort().join()
+  // a link on its way lies in the old mailbox
+  if (draft.email !== before.email) await endLinks(tx, who.companyId, id, now)
   if (hasNewRights) await endSessions(tx, who.companyId, id, id === who.personId && draft.role === before.role ? who.sessionId : null, now)
   return getPerson(tx, who, id)
 }
@@ -55,7 +57,10 @@ export async function setDisabled(tx: Tx, who: Actor, id: string, isDisabled: bo
   const person = await getPerson(tx, who, id)
   if (isDisabled && person.role === 'administrator') await keepOneAdministrator(tx, who, id, 'id')
   await tx.query('update person set disabled_at = $3, version = version + 1 where company_id = $1 and id = $2', [who.companyId, id, isDisabled ? now : null])
-  if (isDisabled) await endSessions(tx, who.companyId, id, null, now)
+  if (isDisabled) {
+    await endSessions(tx, who.companyId, id, null, now)
+    await endLinks(tx, who.companyId, id, now)
+  }
   await trail.record(tx, who, { action: isDisabled ? 'disable' : 'enable', subject: 'person', subjectId: id, subjectName: person.name })
   return getPerson(tx, who, id)
 }

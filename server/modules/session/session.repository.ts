@@ -53,3 +53,8 @@ export const useUpLinks = async (tx: Tx, companyId: string, personId: string, at
 export const updatePerson = async (tx: Tx, companyId: string, id: string, change: Partial<Omit<Person, 'preferences'>> & { preferences?: object }): Promise<void> => {
   await tx.update(Person, { companyId, id }, change as never)
 }
+/** What the people of the office see of a person too: whoever has it open there is told that it changed. */
+export const updateOpenPerson = async (tx: Tx, companyId: string, id: string, change: Partial<Omit<Person, 'preferences'>>): Promise<void> => {
+  await updatePerson(tx, companyId, id, change)
+  await tx.query('update person set version = version + 1 where company_id = $1 and id = $2', [companyId, id])
+}

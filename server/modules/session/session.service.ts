@@ -107,9 +107,12 @@ export async function meOf(tx: Tx, companyId: string, personId: string): Promise
 
 export async function changeMe(tx: Tx, who: Actor, change: MeDto): Promise<Me> {
   const { preferences, ...own } = givenOf(change)
-  const before = (await meOf(tx, who.companyId, who.personId)).preferences
-  const given = preferences ? { ...own, preferences: { ...before, ...givenOf(preferences) } } : own
-  if (Object.keys(given).length > 0) await repository.updatePerson(tx, who.companyId, who.personId, given)
+  const before = await meOf(tx, who.companyId, who.personId)
+  if (preferences) await repository.updatePerson(tx, who.companyId, who.personId, { preferences: { ...before.preferences, ...givenOf(preferences) } })
+  if (trail.difference(before, own)) {
+    await repository.updateOpenPerson(tx, who.companyId, who.personId, own)
+    await trail.recordChange(tx, who, { action: 'change', subject: 'person', subjectId: who.personId, subjectName: own.name ?? before.name }, before, own)
+  }
   return meOf(tx, who.companyId, who.personId)
 }
 
@@ -181,7 +184,11 @@ async function withLink<T>(house: House, text: string, purpose: 'invitation' | '
 }
 
 export const resetPassword = (house: House, input: { token: string; password: string }): Promise<void> =>
-  withLink(house, input.token, 'reset', (tx, link) => setPassword(tx, link.companyId, link.personId, input.password, 'password', null, house.now()))
+  withLink(house, input.token, 'reset', async (tx, link) => {
+    await setPassword(tx, link.companyId, link.personId, input.password, 'password', null, house.now())
+    const { name } = await meOf(tx, link.companyId, link.personId)
+    await trail.record(tx, link, { action: 'change-password', subject: 'person', subjectId: link.personId, subjectName: name })
+  })
 
 export const readInvitation = (house: House, token: string): Promise<{ email: string; name: string; companyName: string }> =>
   withLink(house, token, 'invitation', async (tx, link) => {
@@ -191,10 +198,15 @@ export const readInvitation = (house: House, token: string): Promise<{ email: st
 
 export const acceptInvitation = (house: House, token: string, input: { name: string; password: string; userAgent: string }): Promise<SignedIn> =>
   withLink(house, token, 'invitation', async (tx, link) => {
+    const before = await meOf(tx, link.companyId, link.personId)
     await setPassword(tx, link.companyId, link.personId, input.password, 'password', null, house.now())
-    await repository.updatePerson(tx, link.companyId, link.personId, { name: input.name })
+    await repository.updateOpenPerson(tx, link.companyId, link.personId, { name: input.name })
+    await trail.record(tx, link, { action: 'accept', subject: 'person', subjectId: link.personId, subjectName: input.name, before: { name: before.name }, after: { name: input.name } })
     return startSession(house, tx, { companyId: link.companyId, id: link.personId }, input.userAgent)
   })
+
+/** Makes every invitation and reset link that is on its way to a person useless. */
+export const endLinks = (tx: Tx, companyId: string, personId: string, now: Date): Promise<void> => repository.useUpLinks(tx, companyId, personId, now)
 
 /** Signs a person out everywhere, or everywhere but here. */
 export const endSessions = (tx: Tx, companyId: string, personId: string, exceptId: string | null, now: Date): Promise<void> =>
