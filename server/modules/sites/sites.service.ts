@@ -8,7 +8,7 @@ import * as standing from '../standing/standing.service'
 import * as trail from '../trail/trail.service'
 import { circuitIdsOfSite, siteById } from './sites.repository'
 
-export { listSites } from './sites.repository'
+export { listSites, siteById as findSite } from './sites.repository'
 
 /** @throws Problem not-found */
 export async function getSite(tx: Tx, who: Actor, id: string): Promise<WireSite> {

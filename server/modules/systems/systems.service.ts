@@ -6,7 +6,7 @@ import type { Tx } from '../../database'
 import { badField, notFound, Problem } from '../../problem'
 import { insertRow, toColumns, updateVersioned } from '../../versioned'
 import { circuitsOfSystems } from '../circuits/circuits.service'
-import { getSite } from '../sites/sites.service'
+import { findSite } from '../sites/sites.service'
 import * as standing from '../standing/standing.service'
 import * as trail from '../trail/trail.service'
 import { circuitIdsOfSystem, pageOfSystems, systemById, type SystemRow } from './systems.repository'
@@ -31,7 +31,8 @@ async function withCircuits(tx: Tx, who: Actor, rows: SystemRow[], now: Date): P
 }
 
 export async function createSystem(tx: Tx, who: Actor, draft: SystemDraft, now: Date, id: string = uuid()): Promise<WireSystem> {
-  const site = await getSite(tx, who, draft.siteId).catch(() => { throw badField('siteId', 'unknownSite') })
+  const site = await findSite(tx, who, draft.siteId)
+  if (!site) throw badField('siteId', 'unknownSite')
   checkDecision(draft)
   await insertRow(tx, 'system', { company_id: who.companyId, id, customer_id: site.customerId, ...toColumns(draft) })
   await trail.record(tx, who, { action: 'create', subject: 'system', subjectId: id, subjectName: draft.tag, after: draft })

@@ -48,8 +48,8 @@ export async function visitById(tx: Tx, who: Actor, id: string): Promise<WireVis
 
 const wire = ({ page_key: _key, ...row }: Row, who: Actor): WireVisit => ({ ...row, may: held(who, ['visit.update']) })
 
-export const hasCalculation = async (tx: Tx, companyId: string, id: string): Promise<boolean> =>
-  (await tx.query('select from visit_calculation where company_id = $1 and id = $2', [companyId, id]) as unknown[]).length > 0
+export const visitOfCalculation = async (tx: Tx, companyId: string, id: string): Promise<string | null> =>
+  (await tx.query('select visit_id from visit_calculation where company_id = $1 and id = $2', [companyId, id]) as { visit_id: string }[])[0]?.visit_id ?? null
 
 export const customerOfVisit = async (tx: Tx, companyId: string, visitId: string): Promise<string | null> =>
   (await tx.query('select customer_id from visit where company_id = $1 and id = $2', [companyId, visitId]) as { customer_id: string }[])[0]?.customer_id ?? null
