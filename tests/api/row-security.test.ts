@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { sealCompany } from '../../server/modules/ledger/seal.service'
 import { asAdmin } from '../support/database'
 import { aDraft } from '../support/drafts'
 import { aCircuit, aCustomer, aCylinder } from '../support/builders'
@@ -68,5 +69,28 @@ describe('row security, with the application’s own filter out of the way', () 
     expect(role).toEqual({ rolsuper: false, rolbypassrls: false })
     const owned = await asAdmin(server.database, async (client) => (await client.query(`select tablename from pg_tables where tableowner = 'weighback_app'`)).rows)
     expect(owned).toEqual([])
+  })
+})
+
+describe('the ledger and the trail, in the database itself', () => {
+  const LEDGER = ['posting', 'entry', 'seal', 'sealed_posting', 'trail'] as const
+
+  it.each(LEDGER)('take no change, no deletion and no emptying of %s, from the application or from the owner of the tables', async (table) => {
+    await server.house.database.inCompany({ companyId: ours.id, customerIds: null }, (tx) => sealCompany(tx, ours.id))
+    const before = await count({ companyId: ours.id, customerIds: null }, table)
+    expect(before).toBeGreaterThan(0)
+    for (const sql of [`update ${table} set company_id = company_id`, `delete from ${table}`, `truncate ${table} cascade`]) {
+      await expect(server.house.database.inCompany({ companyId: ours.id, customerIds: null }, (tx) => tx.query(sql))).rejects.toThrow(/permission denied/)
+      await expect(asAdmin(server.database, (client) => client.query(`set role weighback_owner; ${sql}`))).rejects.toThrow(/append-only/)
+    }
+    expect(await count({ companyId: ours.id, customerIds: null }, table)).toBe(before)
+  })
+
+  it('take no row into another company', async () => {
+    const insert = (table: string, columns: string, values: string) =>
+      server.house.database.inCompany({ companyId: ours.id, customerIds: null }, (tx) => tx.query(`insert into ${table} (${columns}) values (${values})`))
+    await expect(insert('customer', 'company_id, id, name', `'${theirs.id}', gen_random_uuid(), 'Smuggled'`)).rejects.toThrow(/row-level security/)
+    await expect(insert('account', 'company_id, id, kind', `'${theirs.id}', gen_random_uuid(), 'cylinder'`)).rejects.toThrow(/row-level security/)
+    await expect(insert('trail', 'company_id, id, action, subject, subject_id, subject_name', `'${theirs.id}', gen_random_uuid(), 'create', 'site', gen_random_uuid(), ''`)).rejects.toThrow(/row-level security/)
   })
 })
