@@ -71,6 +71,15 @@ describe('a customer', () => {
     await aCustomer(theirs.officer, { name: 'Cold Store' })
   })
 
+  it('names the field that is taken or too long', async () => {
+    const { officer } = await aCompany(server)
+    await aCustomer(officer, { name: 'Grocer' })
+    const taken = await officer.post('/api/customers', customerDraft({ name: 'Grocer' })).expect(409)
+    expect(taken.body).toMatchObject({ code: 'name-taken', errors: [{ field: 'name', message: 'This one is taken: choose another.' }] })
+    const long = await officer.post('/api/customers', customerDraft({ name: 'x'.repeat(121) })).expect(422)
+    expect(long.body.errors).toEqual([{ field: 'name', message: 'At most 120 characters.' }])
+  })
+
   it('is changed by version: who comes second is told, and nothing of the first is lost', async () => {
     const { officer, administrator } = await aCompany(server)
     const customer = await aCustomer(officer)
