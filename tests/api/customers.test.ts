@@ -22,13 +22,13 @@ describe('the list of customers', () => {
 
   it('finds by words in any column, in any order, and takes wildcards literally', async () => {
     const { officer } = await aCompany(server)
-    await aCustomer(officer, { name: 'Harbour Market', contactName: 'Wren Abel', address: '12 Pier Road' })
-    await aCustomer(officer, { name: 'Hill Market' })
+    await aCustomer(officer, { name: 'Quince Market', contactName: 'Wren Abel', address: '12 Pier Road' })
+    await aCustomer(officer, { name: 'Reed Market' })
     const found = async (search: string) => names((await officer.get(`/api/customers?search=${encodeURIComponent(search)}`).expect(200)).body.rows)
-    expect(await found('pier WREN')).toEqual(['Harbour Market'])
-    expect(await found('market')).toEqual(['Harbour Market', 'Hill Market'])
+    expect(await found('pier WREN')).toEqual(['Quince Market'])
+    expect(await found('market')).toEqual(['Quince Market', 'Reed Market'])
     expect(await found('%')).toEqual([])
-    expect(await found('Har_our')).toEqual([])
+    expect(await found('Qui_ce')).toEqual([])
   })
 
   it('names a sort, a place or a length that it does not know', async () => {
@@ -42,11 +42,11 @@ describe('the list of customers', () => {
 describe('a customer', () => {
   it('is added with what was typed, trimmed, and noted in the trail', async () => {
     const { officer } = await aCompany(server)
-    const draft = customerDraft({ name: '  Mill Street Foods ', contactName: '', email: 'desk@mill-street.example', note: 'Key at the gate' })
+    const draft = customerDraft({ name: '  Test Foods ', contactName: '', email: 'desk@test-foods.example', note: 'Key at the gate' })
     const { body, headers } = await officer.post('/api/customers', draft).expect(201)
-    expect(body).toMatchObject({ name: 'Mill Street Foods', contactName: null, email: 'desk@mill-street.example', note: 'Key at the gate', siteCount: 0, version: 1, may: ['customer.update'] })
+    expect(body).toMatchObject({ name: 'Test Foods', contactName: null, email: 'desk@test-foods.example', note: 'Key at the gate', siteCount: 0, version: 1, may: ['customer.update'] })
     expect(headers.etag).toBe('"1"')
-    expect(await trailOf(officer, body.id)).toMatchObject([{ action: 'create', subject: 'customer', before: null, after: { name: 'Mill Street Foods' } }])
+    expect(await trailOf(officer, body.id)).toMatchObject([{ action: 'create', subject: 'customer', before: null, after: { name: 'Test Foods' } }])
   })
 
   it('counts its sites', async () => {
@@ -66,9 +66,9 @@ describe('a customer', () => {
 
   it('has a name of its own within the company, whatever the case; another company may use it too', async () => {
     const [ours, theirs] = [await aCompany(server), await aCompany(server)]
-    await aCustomer(ours.officer, { name: 'Cold Store' })
-    expect((await ours.officer.post('/api/customers', customerDraft({ name: 'COLD STORE' })).expect(409)).body.code).toBe('name-taken')
-    await aCustomer(theirs.officer, { name: 'Cold Store' })
+    await aCustomer(ours.officer, { name: 'Test Store' })
+    expect((await ours.officer.post('/api/customers', customerDraft({ name: 'TEST STORE' })).expect(409)).body.code).toBe('name-taken')
+    await aCustomer(theirs.officer, { name: 'Test Store' })
   })
 
   it('names the field that is taken or too long', async () => {

@@ -22,7 +22,7 @@ describe('the list of sites', () => {
     const { officer } = await aCompany(server)
     const customer = await aCustomer(officer)
     const made: string[] = []
-    for (let index = 0; index < 5; index++) made.push((await aSite(officer, { customerId: customer.id, city: index === 4 ? 'Alton' : 'Testville' })).id)
+    for (let index = 0; index < 5; index++) made.push((await aSite(officer, { customerId: customer.id, city: index === 4 ? 'Alderby' : 'Testville' })).id)
     const seen = ids(await everyPage(officer, '/api/sites?sort=city', 2))
     expect(seen[0]).toBe(made[4])
     expect([...seen].sort()).toEqual([...made].sort())
@@ -31,10 +31,10 @@ describe('the list of sites', () => {
 
   it('is narrowed to a customer and found by city and customer name', async () => {
     const { officer } = await aCompany(server)
-    const [first, second] = [await aCustomer(officer, { name: 'Fern Foods' }), await aCustomer(officer)]
-    const [a, b] = [await aSite(officer, { customerId: first.id, city: 'Elmira' }), await aSite(officer, { customerId: second.id })]
+    const [first, second] = [await aCustomer(officer, { name: 'Quill Test' }), await aCustomer(officer)]
+    const [a, b] = [await aSite(officer, { customerId: first.id, city: 'Fernby' }), await aSite(officer, { customerId: second.id })]
     expect(ids((await officer.get(`/api/sites?customerId=${second.id}`)).body.rows)).toEqual([b.id])
-    expect(ids((await officer.get('/api/sites?search=elmira fern')).body.rows)).toEqual([a.id])
+    expect(ids((await officer.get('/api/sites?search=fernby quill')).body.rows)).toEqual([a.id])
   })
 })
 

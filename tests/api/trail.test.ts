@@ -24,12 +24,12 @@ describe('the trail', () => {
 
   it('is narrowed to a kind of record, to one record, and to words', async () => {
     const { officer } = await aCompany(server)
-    const customer = await aCustomer(officer, { name: 'Fern Foods' })
+    const customer = await aCustomer(officer, { name: 'Quill Test' })
     const site = await aSite(officer, { customerId: customer.id })
     const subjects = async (query: string) => (await officer.get(`/api/trail?${query}`).expect(200)).body.rows.map(({ subjectId }: WireTrailRow) => subjectId)
     expect(await subjects('subject=site')).toEqual([site.id])
     expect(await subjects(`subjectId=${customer.id}`)).toEqual([customer.id])
-    expect(await subjects('search=fern create')).toEqual([customer.id])
+    expect(await subjects('search=quill create')).toEqual([customer.id])
     expect(fieldsOf(await officer.get('/api/trail?subjectId=x&sort=name').expect(422))).toEqual(['subjectId'])
   })
 
