@@ -21,7 +21,7 @@ afterAll(async () => {
 /** What the API says to the person at the screen. */
 const ask = async <Answer>(person: Person, path: string): Promise<Answer> => (await person.page.request.get(`${application.baseUrl}${path}`)).json() as Promise<Answer>
 
-/** The circuit of the story: RTU-4, circuit 1, of the demo's office court; 8.9 % against a threshold of 10 %. */
+/** The circuit of the story: RTU-4, circuit 1, of the demo's office court; near its threshold of 10 %. */
 const theCircuit = async (person: Person): Promise<CircuitStanding> => {
   const { rows } = await ask<Rows<CircuitStanding>>(person, '/api/circuits?search=RTU-4+Tollgate')
   const circuit = rows.find((row) => row.standing === 'near')
