@@ -71,7 +71,7 @@ export const en = {
     'link-expired': { title: 'This link no longer works', detail: 'It was used already, replaced by a newer one, or is too old. Ask for a new one.' },
     'too-many-requests': { title: 'Too many tries', detail: 'Wait {minutes} min, then try again.' },
     'version-missing': { title: 'The version is missing', detail: 'Open the record again and send the change with its version (If-Match).' },
-    'changed-meanwhile': { title: 'Somebody changed this meanwhile', detail: 'Your change was not saved. Open the record again, compare, and enter it once more.' },
+    'changed-meanwhile': { title: 'Somebody changed this meanwhile', detail: 'Your change was not saved. Compare it with what stands now, then save it again.' },
     'idempotency-key-missing': { title: 'The posting has no key', detail: 'Send the id of the posting as Idempotency-Key too.' },
     'email-taken': { title: 'This e-mail address has an account already', detail: 'Use another address, or look the person up in the list.' },
     'name-taken': { title: 'This name is taken', detail: 'Another record here has it already. Choose another name or number.' },
@@ -233,7 +233,9 @@ export const en = {
       wrongFields: 'One entry needs a look. | {count} entries need a look.',
       fieldRequired: 'Please fill this in.',
       namedFault: '{name}: {message}',
-      changedMeanwhile: 'Someone changed this in the meantime',
+      changedMeanwhile: 'Your entry is kept',
+      changedMeanwhileText: 'Where it differs, what now stands is shown under the field. Save again to put yours in its place.',
+      standsNow: 'now: {value}',
     },
     problem: {
       offlineTitle: 'No connection',
@@ -744,6 +746,7 @@ export const en = {
       },
       reversed: 'Taken back by {person} on {date}: {reason}',
       reading: '{value} {unit}',
+      readingInTwo: '{pounds} lb {ounces} oz',
       before: 'Scale before',
       after: 'Scale after',
       scale: 'Scale readings',
@@ -925,7 +928,7 @@ export const en = {
     owner: {
       title: 'Your systems',
       fine: 'No circuit of yours leaks above its threshold.',
-      over: 'One circuit of yours leaks above its threshold and must be repaired. | {count} circuits of yours leak above their threshold and must be repaired.',
+      over: 'One circuit of yours is above its threshold: the law asks that its leaks be repaired. | {count} circuits of yours are above their threshold: the law asks that their leaks be repaired.',
       flat: 'One circuit has lost its whole charge. | {count} circuits have lost their whole charge.',
       near: 'One circuit has come near its threshold. | {count} circuits have come near their threshold.',
       far: 'One circuit is well below it. | {count} circuits are well below it.',
@@ -1051,7 +1054,7 @@ export const en = {
       saved: 'The test is recorded.', restarts: 'all leaks repaired: the rolling sum begins anew',
     },
     ledger: {
-      title: 'Ledger', none: 'Nothing posted yet', noneText: 'The first weigh-in at this circuit appears here.', date: 'Date',
+      title: 'Ledger', none: 'Nothing posted yet', noneText: 'If gas is in it already, post that once as its opening charge. Every weigh-in follows here.', opening: 'Post its opening charge', date: 'Date',
       kind: 'Kind', who: 'Person', cylinder: 'Cylinder', entered: 'As entered', mass: 'Mass', rate: 'Rate',
       reversed: 'taken back', toReversal: 'see the reversal', reverses: 'takes back', toOriginal: 'an earlier posting',
       all: 'All postings of this circuit',
@@ -1174,6 +1177,7 @@ export const en = {
     isReversal: 'Takes back an earlier posting',
     toReversal: 'See the reversal',
     toOriginal: 'See what it takes back',
+    anew: 'Post it anew',
     page: {
       title: '{kind}, {date}', entries: 'Double entry', entriesText: 'Each entry goes out of one account into another; the sum is zero.',
       account: 'Account', into: 'In', out: 'Out', sum: 'Sum', balanced: 'balanced', facts: 'What was recorded',

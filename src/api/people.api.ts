@@ -9,6 +9,7 @@ const pathOf = (id: string): string => `/api/people/${encodeURIComponent(id)}`
 
 export const listPeople = (query: ListQuery & Partial<Record<PersonFilter, string>>, signal?: AbortSignal): Promise<Page<WirePerson>> =>
   get('/api/people', { query: { ...query }, signal })
+export const getPerson = (id: string): Promise<WirePerson> => get(pathOf(id))
 export const invitePerson = (body: PersonDraft): Promise<InvitedPerson> => post('/api/people', { body })
 export const inviteAgain = (id: string): Promise<InvitedPerson> => post(`${pathOf(id)}/invite`)
 export const changePerson = (id: string, version: number, body: PersonDraft): Promise<WirePerson> => patch(pathOf(id), { body, version })

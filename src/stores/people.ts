@@ -6,6 +6,7 @@ export type { PersonFilter } from '../api/people.api'
 /** People of the company and their invitations. */
 export const usePeopleStore = defineStore('people', () => ({
   list: api.listPeople,
+  get: api.getPerson,
   invite: api.invitePerson,
   inviteAgain: api.inviteAgain,
   change: api.changePerson,
