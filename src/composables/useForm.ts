@@ -52,6 +52,14 @@ export function useForm<Values extends object>({ draft, initial, check, submit }
     if (timer !== undefined) keepDraft()
   })
 
+  // What was found wrong here and has been mended needs a look no more.
+  const stillWrong = computed(() => (problem.value || fieldProblems.value.length === 0 ? null : check?.(values).map(({ field }) => field) ?? null))
+  watch(stillWrong, (wrong) => {
+    if (!wrong) return
+    const left = fieldProblems.value.filter(({ field }) => wrong.includes(field))
+    if (left.length < fieldProblems.value.length) fieldProblems.value = left
+  })
+
   /** Back to other values, such as the row that has just been read again. */
   function reset(to: Values = initial()): void {
     Object.assign(values, to)

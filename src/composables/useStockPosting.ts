@@ -13,7 +13,9 @@ import type { PostingStates } from '../../shared/mass/states'
 import { circuitStateOf, cylinderStateOf } from '../../shared/mass/states-from-wire'
 import { postingWarnings } from '../../shared/mass/warnings'
 import { netOf, parseMass, varianceFromScale, type NetReading } from '../../shared/units/mass-units'
+import { useCircuitsStore } from '../stores/circuits'
 import { useLedgerStore } from '../stores/ledger'
+import { usePartnersStore } from '../stores/partners'
 import { useForm } from './useForm'
 
 /** Postings that are made at the desk or in the store, outside a circuit's weigh-in. */
@@ -35,22 +37,35 @@ export interface StockEntry {
   after: string
   amount: string
   isNewlyFilled: boolean
+  /** The accounts chosen, so that a draft brings them back too. */
+  cylinderId: string | null
+  toCylinderId: string | null
+  circuitId: string | null
+  partnerId: string | null
   occurredOn: PlainDate | null
   occurredAt: string
   note: string | null
 }
 
 /** A stock posting: the entry, what it comes to, what speaks against it, and its one sending. */
-export function useStockPosting({ kind, massUnit }: { kind: StockKind; massUnit: MassUnit }) {
+export function useStockPosting({ kind, massUnit, begunAt = { cylinderId: null, circuitId: null } }: {
+  kind: StockKind
+  massUnit: MassUnit
+  /** The cylinder or circuit it was begun at: its draft is kept apart from the others. */
+  begunAt?: { cylinderId: string | null; circuitId: string | null }
+}) {
   const { t } = useI18n()
   const ledger = useLedgerStore()
+  const circuits = useCircuitsStore()
+  const partners = usePartnersStore()
   const cylinder = shallowRef<WireCylinder | null>(null)
   const toCylinder = shallowRef<WireCylinder | null>(null)
   const circuit = shallowRef<WireCircuit | null>(null)
   const partner = shallowRef<WirePartner | null>(null)
   const posted = shallowRef<WirePosting | null>(null)
-  const fresh = freshEntry(kind, massUnit)
-  const form = useForm<StockEntry>({ draft: 'posting.stock', initial: () => ({ ...fresh }), check: () => faults(), submit: send })
+  const fresh = { ...freshEntry(kind, massUnit), ...begunAt }
+  const begun = begunAt.cylinderId ?? begunAt.circuitId
+  const form = useForm<StockEntry>({ draft: begun ? `posting.stock.${begun}` : 'posting.stock', initial: () => ({ ...fresh }), check: () => faults(), submit: send })
   const entry = form.values
 
   const today = localDateOf(new Date().toISOString(), Intl.DateTimeFormat().resolvedOptions().timeZone)
@@ -146,6 +161,20 @@ export function useStockPosting({ kind, massUnit }: { kind: StockKind; massUnit:
     cylinder.value = toCylinder.value = circuit.value = partner.value = posted.value = null
   }
 
+  for (const field of ['cylinderId', 'toCylinderId', 'circuitId', 'partnerId'] as const) watch(() => idOf[field].value?.id ?? null, (id) => { entry[field] = id })
+  if (form.isDraftRestored.value) void bringBack({ ...entry })
+  /** What cannot be read again is chosen again. */
+  async function bringBack({ cylinderId, toCylinderId, circuitId, partnerId }: StockEntry): Promise<void> {
+    const again = async <Row>(id: string | null, get: (id: string) => Promise<Row>): Promise<Row | null> => (id ? get(id).catch(() => null) : null)
+    const [from, to, into, by] = await Promise.all([
+      again(cylinderId, ledger.getCylinder), again(toCylinderId, ledger.getCylinder), again(circuitId, circuits.get), again(partnerId, partners.get),
+    ])
+    cylinder.value ??= from
+    toCylinder.value ??= to
+    circuit.value ??= into
+    partner.value ??= by
+  }
+
   watch(() => entry.kind, () => {
     form.fieldProblems.value = []
     if (partner.value && partner.value.kind !== partnerKind.value) partner.value = null
@@ -161,6 +190,7 @@ function freshEntry(kind: StockKind, unit: MassUnit): StockEntry {
   const now = new Date().toISOString()
   return {
     id: uuid(), kind, way: kind === 'return' || kind === 'reclaim' || kind === 'destruction' ? 'all' : 'net', unit, before: '', after: '', amount: '', isNewlyFilled: false,
+    cylinderId: null, toCylinderId: null, circuitId: null, partnerId: null,
     occurredOn: localDateOf(now, Intl.DateTimeFormat().resolvedOptions().timeZone), occurredAt: now, note: null,
   }
 }
