@@ -1,7 +1,7 @@
 import 'reflect-metadata'
 import { Transform, Type } from 'class-transformer'
 import {
-  IsArray, IsBoolean, IsEmail, IsIn, IsInt, IsOptional, IsUUID, Length, Matches, Max, Min, ArrayMaxSize, ArrayUnique,
+  IsArray, IsBoolean, IsEmail, IsIn, IsInt, IsISO31661Alpha2, IsOptional, IsUUID, Length, Matches, Max, Min, ArrayMaxSize, ArrayUnique,
   ValidateBy, ValidateIf, ValidateNested, buildMessage,
 } from 'class-validator'
 import { isPlainDate, isTimeZone } from '../shared/dates/plain-date'
@@ -68,7 +68,7 @@ export const InstantText = (): PropertyDecorator => compose(
   check('instantReal', 'instant', (value) => typeof value === 'string' && !Number.isNaN(Date.parse(value)) && value >= '1900' && value < '2201'),
 )
 export const TimeZone = (): PropertyDecorator => check('timeZone', 'timeZone', (value) => typeof value === 'string' && value.length < 64 && isTimeZone(value))
-export const Country = (): PropertyDecorator => Matches(/^[A-Z]{2}$/, sentence('country'))
+export const Country = (): PropertyDecorator => IsISO31661Alpha2(sentence('country'))
 
 const readMass = (value: unknown): Mass | null => {
   if (typeof value !== 'string' || value.length > 40) return null

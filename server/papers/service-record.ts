@@ -217,7 +217,8 @@ function drawReversal(sheet: Sheet, words: Words, { reason, personName, occurred
 function entryFacts(words: Words, entry: RecordEntry): Fact[] {
   const { entered } = entry
   const unit = entered ? words.text(`unit.name.${entered.unit}`) : ''
-  const reading = (value: string | null | undefined): string => (value ? words.text('record.reading', { value, unit }) : words.text('notRecorded'))
+  const inTwo = /^\d+-/ // pounds and ounces as they are stored
+  const reading = (value: string | null | undefined): string => (value ? words.text(inTwo.test(value) ? 'record.readingInTwo' : 'record.reading', { value, unit, pounds: value.split('-')[0], ounces: value.split('-')[1] }) : words.text('notRecorded'))
   const readings = entered?.before || entered?.after
     ? [
         { label: words.text('record.before'), value: reading(entered.before) },

@@ -155,6 +155,13 @@ describe('the service record, 40 CFR 82.157(l)', () => {
     expect(headers['content-disposition']).toBe('attachment; filename="service-record_test-site_2026-05-02.pdf"')
   })
 
+  it('spells readings in pounds and ounces out', async () => {
+    const { technician, charge } = await aServicedSite()
+    const { id } = await charge({ pounds: '9', on: '2026-02-01', entered: { unit: 'lb-oz', before: '37-4', after: '28-4.5', amount: null } })
+    const { text } = await pdfOf(technician, `/api/papers/service-record.pdf?postingId=${id}`)
+    for (const reading of ['37 lb 4 oz', '28 lb 4.5 oz']) expect(text).toContain(reading)
+  })
+
   it('shows what is missing as missing', async () => {
     const { technician, charge } = await aServicedSite()
     const { id } = await charge({ pounds: '5', on: '2026-02-01', purpose: null })

@@ -43,6 +43,7 @@ describe('a site', () => {
     const [ours, theirs] = [await aCompany(server), await aCompany(server)]
     const bad = { ...siteDraft(uuid()), timeZone: 'Mars/Olympus', country: 'usa', elevationM: 1.5, rulePacks: ['no-such-pack'], leakRateMethod: 'guessing', surprise: 1 }
     expect(fieldsOf(await ours.officer.post('/api/sites', bad).expect(422))).toEqual(['country', 'elevationM', 'leakRateMethod', 'rulePacks', 'surprise', 'timeZone'])
+    expect(fieldsOf(await ours.officer.post('/api/sites', { ...siteDraft(uuid()), country: 'XX' }).expect(422))).toContain('country')
     const foreign = await aCustomer(theirs.officer)
     for (const customerId of [uuid(), foreign.id]) expect(fieldsOf(await ours.officer.post('/api/sites', siteDraft(customerId)).expect(422))).toEqual(['customerId'])
     expect((await ours.officer.get('/api/sites')).body.rows).toEqual([])
