@@ -592,6 +592,18 @@ export const en = {
   },
   trail: {
     title: 'Trail', text: 'Postings stand in the ledger; everything else that was changed stands here.', subject: 'What', at: 'When', person: 'Who', change: 'Change', search: 'Name, person, action', all: 'Everything', emptyTitle: 'Nothing yet', emptyText: 'The first change of a record is noted here.', fields: 'one field | {count} fields', to: 'to',
+    fieldNames: {
+      name: 'Name', contactName: 'Contact', email: 'E-mail', phone: 'Phone', address: 'Address', note: 'Note', street: 'Street', city: 'City', region: 'State or region', postalCode: 'Postal code',
+      country: 'Country', timeZone: 'Time zone', elevationM: 'Elevation [m]', jurisdiction: 'Jurisdiction', leakRateMethod: 'Leak rate by', rulePacks: 'Rule packs',
+      tag: 'Tag', location: 'Place on site', maker: 'Maker', model: 'Model', serial: 'Serial number', category: 'Category', installedOn: 'Installed on', subsectorDecision: 'Excepted subsector?',
+      subsectorDecidedBy: 'Decided by', subsectorReason: 'Reason', refrigerant: 'Refrigerant', status: 'Status', commissionedOn: 'Commissioned on', fullCharge: 'Full charge', fullChargeKg: 'Full charge',
+      massKg: 'Mass', rangeLowKg: 'Range from', rangeHighKg: 'Range to', method: 'Method', effectiveOn: 'In force from', kind: 'Kind', position: 'Where it sits', contents: 'Contents', tareKg: 'Tare (TW)',
+      waterCapacityKg: 'Water capacity (WC)', testDueOn: 'Next test due', place: 'Place', certificate: 'Certificate', certificateNumber: 'Certificate number', certificateType: 'Certificate type', role: 'Role',
+      cause: 'Cause', foundOn: 'Found on', repair: 'Repair', repairedOn: 'Repaired on', testedOn: 'Tested on', type: 'How it was tested', passed: 'Passed', showsAllRepaired: 'All leaks repaired',
+      text: 'Text', markedOn: 'Seen on', resolvedOn: 'Mended on', visitedOn: 'Date', remark: 'Remark', calculator: 'Calculator', title: 'Title', lines: 'Lines', label: 'Label', value: 'Value',
+      id: 'Number', customerId: 'Customer (number)', customerIds: 'Customers (numbers)', siteId: 'Site (number)', systemId: 'System (number)', circuitId: 'Circuit (number)', componentId: 'Component (number)',
+      leakId: 'Leak (number)', holderId: 'Held by (number)', ownerCustomerId: 'Gas of (number)',
+    },
     subjects: { customer: 'Customer', site: 'Site', system: 'System', circuit: 'Circuit', component: 'Component', 'watch-mark': 'Watch mark', leak: 'Leak', verification: 'Verification test', cylinder: 'Cylinder', partner: 'Trade partner', person: 'Person', visit: 'Visit' },
     actions: { create: 'added', change: 'changed', invite: 'invited', accept: 'accepted the invitation', disable: 'shut', enable: 'opened again', 'change-password': 'password changed', 'revise-full-charge': 'full charge revised', resolve: 'resolved', repair: 'repaired', attach: 'calculation attached' },
   },
