@@ -6,7 +6,6 @@ interface Table { rows: readonly Row[] }
 
 const tables = document.refrigerants as unknown as Record<string, Table>
 const KELVIN = 273.15
-const HALVINGS = 40 // of a table 170 K wide: far below a millionth of a kelvin
 
 export const SATURATION_SOURCE = `${document.source}, Bell et al., Ind. Eng. Chem. Res. 53 (2014) 2498`
 
@@ -16,9 +15,11 @@ export type Looked = { ok: true; value: number } | { ok: false; code: 'outside-t
 const COLUMN = { bubbleKpa: 1, dewKpa: 2, liquidDensity: 3, vapourDensity: 4 } as const
 export type SaturationColumn = keyof typeof COLUMN
 
-/** ln of a column over 1/T [1/K], ascending in 1/T, with the slope of a cubic Hermite spline at each row. */
-export interface Curve { x: number[]; y: number[]; slope: number[] }
-const curves = new Map<string, Curve>()
+/** ln of a column between two rows: a cubic of u = 1/T − from, with u from 0 to width [1/K]. */
+interface Segment { from: number; width: number; c0: number; c1: number; c2: number; c3: number }
+/** ln of a column over 1/T [1/K] as a cubic Hermite spline; segments ascend in 1/T, and `isRising` says whether the values do. */
+interface Curve { first: number; last: number; isRising: boolean; segments: readonly Segment[] }
+const curves = new Map<string, Partial<Record<SaturationColumn, Curve>>>()
 
 /**
  * A saturation property at a temperature, by cubic interpolation of its logarithm in 1/T.
@@ -30,9 +31,7 @@ export function saturationAt(refrigerant: string, column: SaturationColumn, cels
   const curve = curveOf(refrigerant, column)
   if (!curve) return { ok: false, code: 'no-table' }
   const x = 1 / (celsius + KELVIN)
-  const first = curve.x[0] ?? 0
-  const last = curve.x.at(-1) ?? 0
-  if (!(x >= first && x <= last)) return { ok: false, code: 'outside-table', lowest: 1 / last - KELVIN, highest: 1 / first - KELVIN }
+  if (!(x >= curve.first && x <= curve.last)) return { ok: false, code: 'outside-table', lowest: 1 / curve.last - KELVIN, highest: 1 / curve.first - KELVIN }
   return { ok: true, value: Math.exp(interpolate(curve, x)) }
 }
 
@@ -46,19 +45,12 @@ export function saturationAt(refrigerant: string, column: SaturationColumn, cels
 export function temperatureAt(refrigerant: string, column: SaturationColumn, value: number): Looked {
   const curve = curveOf(refrigerant, column)
   if (!curve) return { ok: false, code: 'no-table' }
-  let [cold, hot] = [curve.x.at(-1) ?? 0, curve.x[0] ?? 0]
-  const [atCold, atHot] = [Math.exp(interpolate(curve, cold)), Math.exp(interpolate(curve, hot))]
-  const [lowest, highest] = [Math.min(atCold, atHot), Math.max(atCold, atHot)]
+  const ends = [Math.exp(interpolate(curve, curve.first)), Math.exp(interpolate(curve, curve.last))]
+  const [lowest, highest] = [Math.min(...ends), Math.max(...ends)]
   if (!(value >= lowest && value <= highest)) return { ok: false, code: 'outside-table', lowest, highest }
-  const isRising = atHot > atCold
   const sought = Math.log(value)
-  for (let halving = 0; halving < HALVINGS; halving++) {
-    const middle = (cold + hot) / 2
-    const isBelow = interpolate(curve, middle) < sought
-    if (isBelow === isRising) cold = middle
-    else hot = middle
-  }
-  return { ok: true, value: 2 / (cold + hot) - KELVIN }
+  const segment = lastSegment(curve, ({ c0 }) => (curve.isRising ? c0 <= sought : c0 >= sought))
+  return { ok: true, value: segment ? 1 / (segment.from + solve(segment, sought, curve.isRising)) - KELVIN : Number.NaN }
 }
 
 /**
@@ -80,27 +72,33 @@ export function tableRange(refrigerant: string): { lowest: number; highest: numb
   return rows ? { lowest: rows[0]?.[0] ?? 0, highest: rows.at(-1)?.[0] ?? 0 } : null
 }
 
+/** Curves are made at the first question and kept: 61 refrigerants times four would delay every start. */
 function curveOf(refrigerant: string, column: SaturationColumn): Curve | null {
-  const key = `${refrigerant} ${column}`
-  const known = curves.get(key)
-  if (known) return known
   const table = tables[refrigerant]
   if (!table) return null
-  const curve = curveThrough(table.rows.map((row) => [row[0] ?? 0, row[COLUMN[column]] ?? 0] as const))
-  curves.set(key, curve)
+  const known = curves.get(refrigerant) ?? {}
+  const curve = known[column] ?? curveThrough(table.rows.map((row) => [row[0] ?? 0, row[COLUMN[column]] ?? 0] as const))
+  if (!known[column]) curves.set(refrigerant, { ...known, [column]: curve })
   return curve
 }
 
 /** The curve through rows of [°C, value above zero], ascending in temperature; three rows at least. */
-export function curveThrough(rows: readonly (readonly [celsius: number, value: number])[]): Curve {
+function curveThrough(rows: readonly (readonly [celsius: number, value: number])[]): Curve {
   const falling = [...rows].reverse()
   const x = falling.map(([celsius]) => 1 / (celsius + KELVIN))
   const y = falling.map(([, value]) => Math.log(value))
-  return { x, y, slope: x.map((_at, index) => slopeAt(x, y, index)) }
+  const segments = x.slice(1).map((to, index) => segmentBetween(x, y, index, to))
+  return { first: x[0] ?? 0, last: x.at(-1) ?? 0, isRising: (y.at(-1) ?? 0) > (y[0] ?? 0), segments }
 }
 
-/** The value of a curve at a temperature within its rows. @param celsius [°C] */
-export const readCurve = (curve: Curve, celsius: number): number => Math.exp(interpolate(curve, 1 / (celsius + KELVIN)))
+/** The Hermite cubic from one row to the next, in powers of the distance from the first. */
+function segmentBetween(x: number[], y: number[], index: number, to: number): Segment {
+  const from = x[index] ?? 0
+  const width = to - from
+  const [start, end] = [slopeAt(x, y, index), slopeAt(x, y, index + 1)]
+  const mean = ((y[index + 1] ?? 0) - (y[index] ?? 0)) / width
+  return { from, width, c0: y[index] ?? 0, c1: start, c2: (3 * mean - 2 * start - end) / width, c3: (start + end - 2 * mean) / width ** 2 }
+}
 
 /** The slope of the parabola through a row and its neighbours. */
 function slopeAt(x: number[], y: number[], index: number): number {
@@ -111,17 +109,42 @@ function slopeAt(x: number[], y: number[], index: number): number {
   return y0 * (2 * at - x1 - x2) / ((x0 - x1) * (x0 - x2)) + y1 * (2 * at - x0 - x2) / ((x1 - x0) * (x1 - x2)) + y2 * (2 * at - x0 - x1) / ((x2 - x0) * (x2 - x1))
 }
 
-function interpolate({ x, y, slope }: Curve, at: number): number {
+function interpolate(curve: Curve, at: number): number {
+  const segment = lastSegment(curve, ({ from }) => from <= at)
+  return segment ? valueIn(segment, at - segment.from) : Number.NaN
+}
+
+const valueIn = ({ c0, c1, c2, c3 }: Segment, u: number): number => c0 + u * (c1 + u * (c2 + u * c3))
+const slopeIn = ({ c1, c2, c3 }: Segment, u: number): number => c1 + u * (2 * c2 + 3 * u * c3)
+
+/** The last segment for which something holds that holds for the first and, once false, stays so; by halving. */
+function lastSegment({ segments }: Curve, holds: (segment: Segment) => boolean): Segment | undefined {
   let low = 0
-  let high = x.length - 1
+  let high = segments.length
   while (high - low > 1) {
     const middle = (low + high) >> 1
-    if ((x[middle] ?? 0) <= at) low = middle
+    const segment = segments[middle]
+    if (segment && holds(segment)) low = middle
     else high = middle
   }
-  const [x0 = 0, y0 = 0, m0 = 0] = [x[low], y[low], slope[low]]
-  const [x1 = 0, y1 = 0, m1 = 0] = [x[high], y[high], slope[high]]
-  const h = x1 - x0
-  const t = (at - x0) / h
-  return (1 + 2 * t) * (1 - t) ** 2 * y0 + t * (1 - t) ** 2 * h * m0 + t * t * (3 - 2 * t) * y1 + t * t * (t - 1) * h * m1
+  return segments[low]
+}
+
+const SOLVED_WIDTH = 1e-13 // [1/K] less than a millionth of a kelvin everywhere in the tables
+const MOST_STEPS = 60
+
+/** Where a segment has a value: Newton's steps, and a halving where one would leave what is left. @returns [1/K] from its start */
+function solve(segment: Segment, sought: number, isRising: boolean): number {
+  let low = 0
+  let high = segment.width
+  let at = high / 2
+  for (let step = 0; step < MOST_STEPS; step++) {
+    const excess = valueIn(segment, at) - sought
+    if (excess > 0 === isRising) high = at
+    else low = at
+    const tangent = at - excess / slopeIn(segment, at)
+    if (Math.abs(tangent - at) < SOLVED_WIDTH) return Math.min(Math.max(tangent, 0), segment.width)
+    at = tangent > low && tangent < high ? tangent : (low + high) / 2
+  }
+  return at
 }
