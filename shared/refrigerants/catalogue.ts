@@ -1,3 +1,4 @@
+import type { Source } from '../rules/dated'
 import { Exact } from '../units/decimal'
 
 /** ASHRAE Standard 34: toxicity A or B, flammability 1, 2L, 2 or 3. */
@@ -14,10 +15,9 @@ export interface Refrigerant {
 }
 
 /**
- * The refrigerants that Weighback knows.
+ * The refrigerants that Weighback knows; where each entry is from stands in `CATALOGUE_SOURCES`.
  *
- * @see ASHRAE Standard 34 for designations, nominal compositions and safety classes; the safety classes are
- * from memory and to be checked against the current edition
+ * @see ASHRAE Standard 34 for designations, nominal compositions and safety classes
  */
 export const REFRIGERANTS: readonly Refrigerant[] = [
   { id: 'R-11', safetyClass: 'A1', composition: { 'R-11': '100' } },
@@ -94,13 +94,23 @@ export function refrigerantOf(id: string): Refrigerant {
   return refrigerant
 }
 
-/** Class I (CFC) and class II (HCFC) substances among the components. @see 40 CFR part 82 subpart A, appendices A and B; from memory */
+/** Class I (CFC) and class II (HCFC) substances among the components. */
 const CLASS_I: readonly string[] = ['R-11', 'R-12', 'R-13', 'R-114', 'R-115']
 const CLASS_II: readonly string[] = ['R-22', 'R-123', 'R-124', 'R-142b']
-/** Regulated HFCs among the components. @see 42 U.S.C. 7675(c)(1), the list of 18; from memory */
+/** Regulated HFCs among the components. */
 const REGULATED_HFCS: readonly string[] = ['R-23', 'R-32', 'R-125', 'R-134a', 'R-143a', 'R-152a', 'R-227ea', 'R-236fa', 'R-245fa']
-/** Unsaturated fluorocarbons. @see Regulation (EU) 2024/573, Annex II section 1; from memory */
+/** Unsaturated fluorocarbons among the components. */
 const UNSATURATED: readonly string[] = ['R-1234yf', 'R-1234ze(E)', 'R-1233zd(E)', 'R-1336mzz(E)', 'R-1336mzz(Z)']
+
+/** Where each kind of entry in this file is from, and how well it is founded. */
+export const CATALOGUE_SOURCES = {
+  composition: { cite: 'ASHRAE Standard 34, nominal compositions', basis: 'memory' },
+  safetyClass: { cite: 'ASHRAE Standard 34, safety groups', basis: 'memory' },
+  isEstimated: { cite: 'CoolProp 8.0.0: binary pairs without fitted parameters', basis: 'read' },
+  ozoneClass: { cite: '40 CFR part 82 subpart A, appendices A and B', basis: 'memory' },
+  containsHfc: { cite: '42 U.S.C. 7675(c)(1), the list of 18 regulated substances', basis: 'memory' },
+  containsUnsaturated: { cite: 'Regulation (EU) 2024/573, Annex II section 1', basis: 'memory' },
+} as const satisfies Record<string, Source>
 
 const hasAnyOf = (refrigerant: Refrigerant, components: readonly string[]): boolean =>
   Object.keys(refrigerant.composition).some((component) => components.includes(component))

@@ -8,7 +8,7 @@ export interface GwpSet {
   id: string
   source: { cite: string; basis: Basis }
   values: Readonly<Record<string, string>>
-  /** Components whose value is not in the set's own source, with where it is from. */
+  /** Components whose value is not in the set's own source, with where it is from; of the set's own basis. */
   added: Readonly<Record<string, string>>
 }
 
@@ -29,11 +29,13 @@ export const AR4: GwpSet = {
   },
   added: {
     'R-1234yf': 'Regulation (EU) 517/2014 Annex II', 'R-1234ze(E)': 'Regulation (EU) 517/2014 Annex II', 'R-1233zd(E)': 'Regulation (EU) 517/2014 Annex II',
-    'R-600': 'Regulation (EU) 517/2014 Annex IV',
+    'R-290': 'Regulation (EU) 517/2014 Annex IV', 'R-600': 'Regulation (EU) 517/2014 Annex IV', 'R-600a': 'Regulation (EU) 517/2014 Annex IV',
+    'R-1270': 'Regulation (EU) 517/2014 Annex IV', 'R-717': 'Regulation (EU) 517/2014 Annex IV',
     'R-601a': 'Regulation (EU) 517/2014 Annex IV', 'R-1336mzz(Z)': 'Regulation (EU) 517/2014 Annex II',
     'R-1336mzz(E)': 'WMO 2018', 'R-13I1': 'IPCC AR4 chapter 2: below 1', 'R-1130(E)': 'WMO 2018: below 1',
   },
 }
+
 /**
  * GWP of a refrigerant: for a blend the mean of its components by mass.
  *
