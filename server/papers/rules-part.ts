@@ -1,5 +1,5 @@
 import type { WirePackDecision, WireThreshold } from '../../shared/api/places'
-import { plainDate } from '../../shared/dates/plain-date'
+import { isPlainDate } from '../../shared/dates/plain-date'
 import { percent } from '../../shared/leak-rate/percent'
 import { kg } from '../../shared/mass/mass'
 import { STYLE } from './kit/look'
@@ -49,9 +49,9 @@ export const decisionsText = (words: Words, packs: readonly WirePackDecision[]):
     reasons: reasons.map(({ code, params }) => words.common(`rules.reasons.${code}`, saidParams(words, params))).join(' '),
   })).join('\n')
 
-function saidParams(words: Words, params: Record<string, string>): Record<string, string> {
-  const { chargeKg, from } = params
-  return { ...params, ...(chargeKg ? { charge: words.massInBoth(kg(chargeKg)) } : {}), ...(from ? { from: words.date(plainDate(from)) } : {}) }
+function saidParams(words: Words, { chargeKg, ...rest }: Record<string, string>): Record<string, string> {
+  const said = Object.fromEntries(Object.entries(rest).map(([name, text]) => [name, isPlainDate(text) ? words.date(text) : text]))
+  return chargeKg ? { ...said, charge: words.massInBoth(kg(chargeKg)) } : said
 }
 
 function distinct(thresholds: readonly ThresholdOnPaper[]): ThresholdOnPaper[] {

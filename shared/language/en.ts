@@ -23,13 +23,14 @@ export const en = {
       other: 'What is none of the others, refrigerated transport among it.',
     },
     packs: {
-      'us-ods': { title: 'United States, ozone-depleting refrigerants', summary: 'Leak repair for appliances of 50 lb or more of a class I or class II refrigerant or a blend that contains one (40 CFR 82.157).' },
+      'us-ods': { title: 'United States, ozone-depleting refrigerants', summary: 'Leak repair for appliances of 50 lb or more of a class I or class II refrigerant or a blend that contains one (40 CFR 82.157). Until 9 April 2020 the section covered substitutes too, which is not computed here.' },
       'us-hfc': { title: 'United States, HFCs and substitutes', summary: 'Leak repair from 2026 for appliances of 15 lb or more of a refrigerant that contains an HFC, or of a substitute with a GWP above 53 (40 CFR 84.106).' },
     },
     applies: { yes: 'applies', no: 'does not apply', undecided: 'to be settled' },
     reasons: {
       'switched-off': 'The site has not switched this pack on.',
       'not-in-force': 'It is in force only from {from}.',
+      'no-longer-in-force': 'It was in force until {until}.',
       'ozone-depleting': 'The refrigerant is ozone-depleting.',
       'not-ozone-depleting': 'The refrigerant is not ozone-depleting.',
       'contains-hfc': 'The refrigerant contains a regulated HFC.',
@@ -54,7 +55,7 @@ export const en = {
       'chronic-leak-report': { title: 'Report on a chronically leaking appliance', explanation: 'Losses reached 125 % of the full charge in a calendar year: due on 1 March of the next.' },
       withProcessShutdown: '{on} where an industrial process must be shut down for the repair.',
     },
-    values: { threshold: 'Leak rate above which action is due', leastCharge: 'Smallest full charge that is covered', retention: 'How long records are kept', gwpAbove: 'GWP above which a substitute is covered' },
+    values: { threshold: 'Leak rate above which action is due', leastCharge: 'Smallest full charge that is covered', retention: 'How long records are kept', gwpAbove: 'GWP above which a substitute is covered', chronicLoss: 'Loss in a calendar year that makes a leak chronic' },
   },
   problems: {
     whereCircuit: 'The circuit',
@@ -609,7 +610,7 @@ export const en = {
   },
   pack: {
     title: 'Rule packs', text: 'The law as Weighback computes it: every value with its source, since when it holds and when it was last checked. A site switches packs on.',
-    scope: 'To whom it applies', duties: 'What runs, and until when', above: 'Above it, not at it.', everyCategory: 'every category', from: 'from {charge}', below: 'below {charge}', days: 'one day | {count} days', daysWithShutdown: '{days} days; {longer} where an industrial process must be shut down', years: 'one year | {count} years',
+    scope: 'To whom it applies', duties: 'What runs, and until when', above: 'Above it, not at it.', everyCategory: 'every category', from: 'from {charge}', orMore: '{percent} of the full charge or more', below: 'below {charge}', days: 'one day | {count} days', daysWithShutdown: '{days} days; {longer} where an industrial process must be shut down', years: 'one year | {count} years',
     nextYearOn: 'on {month}/{day} of the next year', schedules: { quarterly: 'every three months', 'calendar-year': 'once a calendar year' }, source: '{cite}, {basis}; in force from {from}, checked {checkedOn}',
     triggers: { 'above-threshold': 'when an addition’s rate is above the threshold', repaired: 'when a leak is repaired', 'initial-test-passed': 'when the initial test is passed', 'follow-up-failed': 'when the follow-up test fails, or the rate stays above', 'plan-made': 'when the plan is made', 'chronic-leak': 'when losses reach 125 % of the full charge in a calendar year' },
   },

@@ -18,11 +18,13 @@ export interface CircuitFacts {
   subsectorDecision: 'excepted' | 'not-excepted' | null
 }
 
+export const REASON_CODES = [
+  'switched-off', 'not-in-force', 'no-longer-in-force', 'not-ozone-depleting', 'ozone-depleting', 'no-hfc-and-low-gwp', 'contains-hfc', 'substitute-above-gwp',
+  'gwp-unknown', 'charge-unknown', 'charge-below', 'charge-reached', 'subsector-excepted', 'subsector-undecided', 'subsector-not-excepted',
+] as const
 /** Why a pack applies or not; a code under `rules.reasons` in the language file, with what its sentence needs. */
 export interface Reason {
-  code:
-    | 'switched-off' | 'not-in-force' | 'not-ozone-depleting' | 'ozone-depleting' | 'no-hfc-and-low-gwp' | 'contains-hfc' | 'substitute-above-gwp'
-    | 'gwp-unknown' | 'charge-unknown' | 'charge-below' | 'charge-reached' | 'subsector-excepted' | 'subsector-undecided' | 'subsector-not-excepted'
+  code: (typeof REASON_CODES)[number]
   params: Record<string, string>
   /** [kg] the charge that the sentence names, if it does; formatted where it is shown */
   chargeKg: Mass | null
@@ -43,7 +45,7 @@ function decide(circuit: CircuitFacts, pack: RulePack, on: PlainDate): PackDecis
   const answer = (applies: PackDecision['applies'], ...reasons: Reason[]): PackDecision => ({ packId: pack.id, applies, reasons })
   if (!circuit.packIds.includes(pack.id)) return answer('no', reason('switched-off'))
   const least = valueOnOrNone(pack.scope.leastChargeKg, on)
-  if (!least) return answer('no', reason('not-in-force', { from: pack.scope.leastChargeKg.values[0]?.from ?? '' }))
+  if (!least) return answer('no', notInForce(pack, on))
   const gas = refrigerantReason(circuit, pack, on)
   if (!gas.isCovered) return answer('no', gas.why)
   if (!circuit.fullChargeKg) return answer('undecided', gas.why, reason('charge-unknown', {}, least.value))
@@ -58,13 +60,19 @@ function decide(circuit: CircuitFacts, pack: RulePack, on: PlainDate): PackDecis
   }
 }
 
+function notInForce({ scope: { leastChargeKg: { values } } }: RulePack, on: PlainDate): Reason {
+  const next = values.find(({ from }) => from > on)
+  return next ? reason('not-in-force', { from: next.from }) : reason('no-longer-in-force', { until: values.at(-1)?.until ?? '' })
+}
+
 function refrigerantReason({ refrigerant }: CircuitFacts, pack: RulePack, on: PlainDate): { isCovered: boolean; why: Reason } {
   const { refrigerants } = pack.scope
   if (refrigerants.kind === 'ozone-depleting')
     return refrigerant.isOzoneDepleting ? { isCovered: true, why: reason('ozone-depleting') } : { isCovered: false, why: reason('not-ozone-depleting') }
-  // An appliance with a class I or II substance is under the ozone rules, and these rules are for what replaced them.
-  if (refrigerant.isOzoneDepleting) return { isCovered: false, why: reason('ozone-depleting') }
+  // A blend of an HCFC and an HFC, such as R-408A, is under both sets of rules: this one goes by what it contains.
   if (refrigerant.containsHfc) return { isCovered: true, why: reason('contains-hfc') }
+  // A class I or class II substance is what was replaced, not a substitute, whatever its GWP.
+  if (refrigerant.isOzoneDepleting) return { isCovered: false, why: reason('ozone-depleting') }
   const { value: gwpAbove } = valueOn(refrigerants.gwpAbove, on)
   if (refrigerant.gwp === null) return { isCovered: true, why: reason('gwp-unknown', { gwp: gwpAbove }) }
   return new Exact(refrigerant.gwp).greaterThan(gwpAbove)
@@ -92,7 +100,8 @@ export function thresholdsFor(circuit: CircuitFacts, packs: readonly RulePack[],
   })
 }
 
-function appliedPacks(circuit: CircuitFacts, packs: readonly RulePack[], on: PlainDate): RulePack[] {
+/** The packs that apply on a day, those that a person has not settled yet among them. */
+export function appliedPacks(circuit: CircuitFacts, packs: readonly RulePack[], on: PlainDate): RulePack[] {
   const applied = new Set(packsFor(circuit, packs, on).filter(({ applies }) => applies !== 'no').map(({ packId }) => packId))
   return packs.filter((pack) => applied.has(pack.id))
 }

@@ -45,6 +45,8 @@ export interface RulePack {
   }
   threshold: Dated<ByCategory<Percent>>
   duties: readonly DutyRule[]
+  /** [% of full charge lost in a calendar year] at which, not only above which, a leak is chronic and reported */
+  chronicLoss: Dated<Percent>
   /** [years] how long records are kept */
   retention: Dated<number>
 }

@@ -4,7 +4,7 @@ import { percent } from '../../shared/leak-rate/percent'
 import { lb } from '../../shared/mass/mass'
 import type { Category } from '../../shared/rules/categories'
 import { factsOf } from '../../shared/rules/circuit-facts'
-import { dutiesOfAddition, dutiesStarted, packsFor, thresholdsFor, type CircuitFacts } from '../../shared/rules/engine'
+import { dutiesOfAddition, dutiesStarted, lowestThreshold, packsFor, thresholdsFor, type CircuitFacts } from '../../shared/rules/engine'
 import { PACK_IDS, PACKS } from '../../shared/rules/packs'
 
 const ON = plainDate('2026-03-03')
@@ -26,9 +26,29 @@ describe('thresholds, 40 CFR 82.157(c)(2), read; 40 CFR 84.106(c)(2), from memor
     }
   })
 
-  it.each([['19.9999', 0], ['20', 0], ['20.0001', 1]])('a rate of %s %% is above 20 %% only when it is above: duties of %d kinds or more', (rate, least) => {
-    const duties = dutiesOfAddition({ circuit: circuit(), packs: PACKS, rate: percent(rate), on: ON })
-    expect(duties.length > 0).toBe(least > 0)
+  it.each([
+    ['industrial-process', '29.9999', false], ['industrial-process', '30', false], ['industrial-process', '30.0001', true],
+    ['commercial', '19.9999', false], ['commercial', '20', false], ['commercial', '20.0001', true],
+    ['comfort-cooling', '9.9999', false], ['comfort-cooling', '10', false], ['comfort-cooling', '10.0001', true],
+    ['other', '9.9999', false], ['other', '10', false], ['other', '10.0001', true],
+  ] as const)('%s at %s %%: duties start: %s', (category, rate, starts) => {
+    for (const refrigerant of ['R-22', 'R-404A']) {
+      const duties = dutiesOfAddition({ circuit: circuit({ category, refrigerant, decision: 'not-excepted' }), packs: PACKS, rate: percent(rate), on: ON })
+      expect(duties.length > 0).toBe(starts)
+    }
+  })
+
+  it('an addition without a rate starts nothing', () => {
+    expect(dutiesOfAddition({ circuit: circuit(), packs: PACKS, rate: null, on: ON })).toEqual([])
+  })
+
+  it('the lowest of several decides, and none of none', () => {
+    const both = thresholdsFor(circuit({ refrigerant: 'R-408A' }), PACKS, ON)
+    expect(both.map(({ packId }) => packId)).toEqual(['us-ods', 'us-hfc'])
+    const [first] = both
+    if (!first) throw new Error('no threshold')
+    expect(lowestThreshold([first, { ...first, packId: 'stricter', threshold: percent('5') }])?.packId).toBe('stricter')
+    expect(lowestThreshold([])).toBeNull()
   })
 })
 
@@ -54,7 +74,32 @@ describe('to which appliances the packs apply', () => {
     expect(applies(circuit({ refrigerant: 'R-404A', pounds: '15' }))['us-hfc']).toBe('yes')
     expect(applies(circuit({ refrigerant: 'R-744' }))['us-hfc']).toBe('no')
     expect(applies(circuit({ refrigerant: 'R-1234yf' }))['us-hfc']).toBe('no')
-    expect(applies(circuit({ refrigerant: 'R-22' }))['us-hfc']).toBe('no') // an ozone-depleting one is under the other pack
+    expect(applies(circuit({ refrigerant: 'R-22' }))['us-hfc']).toBe('no') // no HFC, and not a substitute
+    expect(reasons(circuit({ refrigerant: 'R-22' }), 'us-hfc')).toEqual(['ozone-depleting'])
+  })
+
+  it('a blend of an HCFC and an HFC goes by what it contains: below 50 lb by the HFC alone', () => {
+    const small = circuit({ refrigerant: 'R-401A', pounds: '30' }) // R-22, R-152a, R-124
+    expect(applies(small)).toEqual({ 'us-ods': 'no', 'us-hfc': 'yes' })
+    expect(reasons(small, 'us-hfc')).toEqual(['contains-hfc', 'charge-reached'])
+    expect(applies(circuit({ refrigerant: 'R-401A', pounds: '50' }))).toEqual({ 'us-ods': 'yes', 'us-hfc': 'yes' })
+    expect(applies(circuit({ refrigerant: 'R-409A', pounds: '30' }))).toEqual({ 'us-ods': 'no', 'us-hfc': 'no' }) // HCFCs only
+  })
+
+  it('a substitute without an HFC goes by its GWP: 53 is not above 53; unknown counts as above', () => {
+    const invented = (gwp: string | null): CircuitFacts => ({ ...circuit({ refrigerant: 'R-1234yf' }), refrigerant: { isOzoneDepleting: false, containsHfc: false, gwp } })
+    expect(['52.9999', '53', '53.0001', null].map((gwp) => applies(invented(gwp))['us-hfc'])).toEqual(['no', 'no', 'yes', 'yes'])
+    expect(reasons(invented(null), 'us-hfc')).toEqual(['gwp-unknown', 'charge-reached'])
+  })
+
+  it('a pack that has ended says until when it was in force', () => {
+    const ended = PACKS.map((pack) => ({
+      ...pack,
+      scope: { ...pack.scope, leastChargeKg: { ...pack.scope.leastChargeKg, values: pack.scope.leastChargeKg.values.map((value) => ({ ...value, until: plainDate('2026-03-02') })) } },
+    }))
+    const [decision] = packsFor(circuit(), ended, ON)
+    expect(decision).toMatchObject({ applies: 'no', reasons: [{ code: 'no-longer-in-force', params: { until: '2026-03-02' } }] })
+    expect(thresholdsFor(circuit(), ended, ON)).toEqual([])
   })
 
   it('asks for comfort cooling whether the excepted subsector holds it, and never decides', () => {

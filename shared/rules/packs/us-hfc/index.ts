@@ -1,6 +1,7 @@
 import { plainDate } from '../../../dates/plain-date'
 import type { RulePack } from '../../pack'
 import { leakRepairDuties } from '../leak-repair-duties'
+import { chronicLoss } from './chronic-loss'
 import { gwpAbove } from './gwp-above'
 import { leastChargeKg } from './least-charge'
 import { retention } from './retention'
@@ -12,5 +13,6 @@ export const usHfc: RulePack = {
   scope: { refrigerants: { kind: 'hfc-or-substitute', gwpAbove }, leastChargeKg, exceptsSubsector: true },
   threshold,
   duties: leakRepairDuties('40 CFR 84.106', plainDate('2026-01-01'), 'memory'),
+  chronicLoss,
   retention,
 }
