@@ -27,12 +27,12 @@ export function judgeVacuumDecay(readings: readonly VacuumReading[], limit: { pu
   const { pullBelow = PULL_BELOW_MICRONS, passBelow = PASS_BELOW_MICRONS, watchMinutes = WATCH_MINUTES } = limit
   readings.forEach((reading, index) => {
     const before = readings[index - 1]
-    if (reading.microns <= 0 || (before && before.minutes >= reading.minutes)) throw new RangeError('Readings ascend in time and lie above zero.')
+    if (!(reading.microns > 0) || (before && !(before.minutes < reading.minutes))) throw new RangeError('Readings ascend in time and lie above zero.')
   })
   const [first] = readings
   const last = readings.at(-1)
   if (!first || !last || readings.length < 3 || last.minutes - first.minutes < watchMinutes) return 'too-short'
-  if (first.microns > pullBelow) return 'not-deep-enough'
+  if (first.microns >= pullBelow) return 'not-deep-enough'
   const isLevelling = levels(readings, first, last)
   if (last.microns < passBelow && isLevelling) return 'passes'
   return isLevelling ? 'moisture' : 'leak'

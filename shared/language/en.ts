@@ -57,6 +57,17 @@ export const en = {
     },
     values: { threshold: 'Leak rate above which action is due', leastCharge: 'Smallest full charge that is covered', retention: 'How long records are kept', gwpAbove: 'GWP above which a substitute is covered', chronicLoss: 'Loss in a calendar year that makes a leak chronic' },
   },
+  cautions: {
+    flammable: '{refrigerant} burns (class {class}): no spark, flame or hot surface near, ventilate, and use a detector and tools made for it.',
+    toxic: '{refrigerant} is toxic (class {class}): wear the protection its safety sheet names.',
+    nitrogen: 'Nitrogen only through a regulator with relief, never oxygen or air; not above the low side’s test pressure.',
+    brazing: 'Braze only on an opened circuit that is purged with nitrogen, with an extinguisher at hand and a fire watch.',
+    'lock-out': 'Lock out and tag out before a cover comes off; capacitors hold their charge.',
+    height: 'Roof edge and ladder: secure yourself and your tools.',
+    liquid: 'Liquid refrigerant freezes skin and eyes: wear goggles and gloves.',
+    vapour: 'Vapour displaces air, low places first: ventilate.',
+    fill: 'Never fill a cylinder above 80 %, past its test date, damaged, or with another gas than it holds.',
+  },
   problems: {
     whereCircuit: 'The circuit',
     whereCylinder: 'Cylinder {number}',
@@ -522,7 +533,7 @@ export const en = {
     tare: 'Tare (TW)', tareHint: 'As stamped.', waterCapacity: 'Water capacity (WC)', waterCapacityHint: 'As stamped; the fill limit is computed from it.', testDueOn: 'Next test due', testHint: 'Read the stamp; as a rule five years after the last test.',
     status: 'Status', statuses: { 'in-use': 'In use', returned: 'Returned', scrapped: 'Scrapped' }, holder: 'Held by', place: 'Place', owner: 'Gas of', ownerHint: 'Recovered gas goes back to this owner’s equipment or to a reclaimer.', content: 'Holds', limit: 'Fill limit', room: 'Room', allStatuses: 'All states', allRefrigerants: 'All refrigerants',
     add: 'Add cylinder', change: 'Change cylinder', pastTest: 'Past its test date', pastTestText: 'It may not be filled. What is in it may still be used up or returned.', stock: 'Post stock', ledger: 'Its ledger', ledgerNone: 'Post what it holds now, or the next purchase into it.', facts: 'As stamped', mine: 'Mine',
-    limitNote: '80 % of the water capacity times the specific gravity of the liquid at 77 °F (25 °C). Common practice after AHRI Guideline K; the stamp and the rules for your cylinder go first.', caution: 'Never fill a cylinder above 80 %, past its test date, damaged, or of another gas.', noLimit: 'no limit without WC', weighing: 'Scale differs from the book',
+    limitNote: '80 % of the water capacity times the specific gravity of the liquid at 77 °F (25 °C). Common practice after AHRI Guideline K; the stamp and the rules for your cylinder go first.', noLimit: 'no limit without WC', weighing: 'Scale differs from the book',
   },
   partner: {
     list: { title: 'Trade partners', text: 'Where gas is bought, and where it goes for reclamation or destruction.', search: 'Name, address, certificate', emptyTitle: 'No partner yet', emptyText: 'Add the supplier you buy from.' },
@@ -549,7 +560,7 @@ export const en = {
       title: 'Standing pressure test', text: 'Nitrogen in a closed circuit, corrected for temperature.', startPressure: 'Pressure at the start ({unit})', startTemperature: 'Temperature at the start ({unit})', endPressure: 'Pressure at the end ({unit})', endTemperature: 'Temperature at the end ({unit})', resolution: 'Resolution of the gauge ({unit})',
       resolutionHint: 'What lies within it is no leak.', expected: 'Expected by temperature alone', difference: 'Reading minus expected', verdicts: { holds: 'holds', falls: 'falls: a leak', rises: 'rises: check the readings' },
       reasons: { holds: 'The difference lies within the resolution of the gauge.', falls: 'More pressure is missing than temperature and gauge explain.', rises: 'More pressure than temperature explains: a reading is off, or the gas was still warming.' },
-      caution: 'Nitrogen only through a regulator with relief, never oxygen or air; not above the low side’s test pressure.', formula: 'p₂ = p₁ × T₂ / T₁, absolute pressures and temperatures', source: 'Ideal gas at constant volume. The gauge’s resolution as tolerance is common practice, no published source; the equipment maker’s procedure goes first.',
+      formula: 'p₂ = p₁ × T₂ / T₁, absolute pressures and temperatures', source: 'Ideal gas at constant volume. The gauge’s resolution as tolerance is common practice, no published source; the equipment maker’s procedure goes first.',
     },
     vacuum: {
       title: 'Vacuum decay', text: 'What the rise in a closed, evacuated circuit says.', minutes: 'Minute of reading {number}', microns: 'µm Hg at reading {number}', add: 'Another reading', pullBelow: 'Pulled below (µm Hg)', passBelow: 'Passes under (µm Hg)', watch: 'Watch for (min)', maker: 'The equipment maker’s limits go first: put them in.', three: 'Three readings at least, the first when the valve is closed.', order: 'The minutes must ascend.', rise: 'Rise', watched: 'Watched for',
@@ -1133,13 +1144,6 @@ export const en = {
       cannot: 'This cannot be posted', look: 'Look once more', book: 'Book charge then', lossRevealed: 'Lost since the last full charge',
       cylinderAfter: 'Left in the cylinder',
       reached: 'Exactly at the threshold is not above it.',
-    },
-    cautions: {
-      liquid: 'Liquid refrigerant freezes skin and eyes: wear goggles and gloves.',
-      vapour: 'Vapour displaces air, low places first: ventilate.',
-      flammable: '{refrigerant} burns (class {class}): no spark, flame or hot surface near, ventilate, and use equipment made for it.',
-      toxic: '{refrigerant} is toxic (class {class}): wear the protection its safety sheet names.',
-      fill: 'Never fill a cylinder above 80 %, past its test date, or with another gas than it holds.',
     },
     warnings: {
       'above-full-charge': 'This is {over} more than the whole circuit holds ({full}).',

@@ -124,7 +124,10 @@ export const isOzoneDepleting = (refrigerant: Refrigerant): boolean => ozoneClas
 export const containsHfc = (refrigerant: Refrigerant): boolean => hasAnyOf(refrigerant, REGULATED_HFCS)
 export const containsUnsaturated = (refrigerant: Refrigerant): boolean => hasAnyOf(refrigerant, UNSATURATED)
 /** Flammable as ASHRAE 34 classes it: 2L, 2 or 3. */
-export const isFlammable = (refrigerant: Refrigerant): boolean => !refrigerant.safetyClass.endsWith('1')
+export const isFlammableClass = (safetyClass: SafetyClass): boolean => !safetyClass.endsWith('1')
+/** Of higher toxicity as ASHRAE 34 classes it: B. */
+export const isToxicClass = (safetyClass: SafetyClass): boolean => safetyClass.startsWith('B')
+export const isFlammable = (refrigerant: Refrigerant): boolean => isFlammableClass(refrigerant.safetyClass)
 export const isBlend = (refrigerant: Refrigerant): boolean => Object.keys(refrigerant.composition).length > 1
 
 /** The components with their share of the mass, which sum to one. @returns [dimensionless] exact */
